@@ -46,22 +46,24 @@ export interface Figures {
   readonly normalEquations?: { entries: number; factorEntries: number; operations: number; treeHeight: number };
   readonly blockTriangular?: { blocks: number; largest: number; singletons: number };
   readonly coarseBlocks?: Readonly<Record<string, unknown>>;
-  readonly condition1?: number;
-  readonly logAbsDeterminant?: number;
+  readonly condition1?: number | null;
+  readonly logAbsDeterminant?: number | null;
   readonly determinantSign?: number | readonly number[];
   readonly inertia?: readonly number[];
   readonly eigenvalues?: readonly number[];
 }
 
+/** The writer of the files put NaN and infinities as bare words, which JSON does not know: they become null. */
+function readFigures(file: string): Record<string, Figures> {
+  const text = readFileSync(join(folder, file), 'utf8');
+  return JSON.parse(text.replace(/-?\b(?:NaN|Infinity)\b/g, 'null'));
+}
+
 /** Figures of the open matrices, by name. */
-export const figures: Readonly<Record<string, Figures>> = JSON.parse(
-  readFileSync(join(folder, 'figures.json'), 'utf8'),
-);
+export const figures: Readonly<Record<string, Figures>> = readFigures('figures.json');
 
 /** Figures of generated problems, by "kind-size" (see engine/problems). */
-export const generatedFigures: Readonly<Record<string, Figures>> = JSON.parse(
-  readFileSync(join(folder, 'figures-generated.json'), 'utf8'),
-);
+export const generatedFigures: Readonly<Record<string, Figures>> = readFigures('figures-generated.json');
 
 /** The folder of further open matrices, or null where the environment names none. */
 export const fetchedFolder: string | null = (() => {
