@@ -1,0 +1,113 @@
+import type { Progress } from '../../matrix/progress.ts';
+import { Random } from '../../matrix/random.ts';
+import { IntegerArena } from './arena.ts';
+import { induce, type Piece } from './induce.ts';
+import { LeafOrdering } from './leaf.ts';
+import { findSeparator, type SeparatorSettings, type SeparatorTools } from './multilevelSeparator.ts';
+import { SEPARATOR, SeparationWorkspace, SIDE_0 } from './separation.ts';
+import { pieceOf, type WholeGraph } from './wholeGraph.ts';
+
+/** Resolved options of a dissection. */
+export interface DissectionSettings extends SeparatorSettings {
+  readonly leafSize: number;
+  readonly seed: number;
+}
+
+/** A separator as a range of positions, in vertices of the whole graph. */
+export interface SeparatorRange {
+  readonly start: number;
+  readonly end: number;
+  readonly level: number;
+}
+
+/** What the recursion shares. */
+interface Dissection {
+  readonly settings: DissectionSettings;
+  readonly tools: SeparatorTools;
+  readonly leaf: LeafOrdering;
+  readonly ones: Int32Array;
+  readonly order: Int32Array;
+  readonly separators: SeparatorRange[];
+  readonly progress: Progress;
+  /** vertices times levels done, and expected in all */
+  done: number;
+  readonly expected: number;
+}
+
+/** Nested dissection (George 1973) of the free vertices: their order (position -> vertex) and the separators in it. */
+export function dissect(
+  whole: WholeGraph,
+  settings: DissectionSettings,
+  progress: Progress,
+): { order: Int32Array; separators: SeparatorRange[] } {
+  const n = whole.freeOrder;
+  const arena = new IntegerArena(whole.neighbour.length + 8 * n);
+  const workspace = new SeparationWorkspace(n);
+  const levels = Math.max(1, Math.log2(n / settings.leafSize) + 1);
+  const d: Dissection = {
+    settings,
+    tools: {
+      arena,
+      workspace,
+      random: new Random(settings.seed),
+      pulse: () => progress(Math.min(1, d.done / d.expected), 'dissection'),
+    },
+    leaf: new LeafOrdering(whole.order, whole.pointer, whole.neighbour, whole.weight),
+    ones: new Int32Array(whole.neighbour.length).fill(1),
+    order: new Int32Array(n),
+    separators: [],
+    progress,
+    done: 0,
+    expected: n * levels,
+  };
+  const { component } = whole;
+  let c = 0;
+  while (c + 1 < component.length) {
+    const from = component[c];
+    // small components share leaves
+    let to = component[++c];
+    while (c + 1 < component.length && component[c + 1] - from <= settings.leafSize) to = component[++c];
+    const mark = arena.mark();
+    dissectPiece(d, pieceOf(whole, from, to, d.ones, arena), from, 0);
+    arena.release(mark);
+  }
+  return { order: d.order, separators: d.separators };
+}
+
+function dissectPiece(d: Dissection, piece: Piece, at: number, level: number): void {
+  const n = piece.graph.order;
+  d.tools.pulse();
+  d.done += n;
+  if (n <= d.settings.leafSize) {
+    d.leaf.orderInto(piece.name, d.order, at);
+    return;
+  }
+  const { arena, workspace } = d.tools;
+  const part = arena.take(n);
+  findSeparator(piece.graph, part, d.settings, d.tools);
+  let count0 = 0;
+  let inSeparator = 0;
+  for (let v = 0; v < n; v++) {
+    if (part[v] === SEPARATOR) inSeparator++;
+    else if (part[v] === SIDE_0) count0++;
+  }
+  const count1 = n - count0 - inSeparator;
+  if (count0 === 0 || count1 === 0) {
+    d.leaf.orderInto(piece.name, d.order, at);
+    return;
+  }
+  const start = at + count0 + count1;
+  d.separators.push({ start, end: at + n, level });
+  let position = start;
+  for (let v = 0; v < n; v++) if (part[v] === SEPARATOR) d.order[position++] = piece.name[v];
+  for (let side = 0; side < 2; side++) {
+    const mark = arena.mark();
+    dissectPiece(
+      d,
+      induce(piece, part, side, workspace.scratch, d.ones, arena),
+      side === 0 ? at : at + count0,
+      level + 1,
+    );
+    arena.release(mark);
+  }
+}
