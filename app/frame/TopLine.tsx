@@ -1,0 +1,88 @@
+import { useRef } from 'react';
+import { useStore } from 'zustand';
+import { asText, bytes, count, exactly, rate } from '../figures/format.ts';
+import { closeSheet } from '../intake/closing.ts';
+import { settingsStore } from '../state/settings.ts';
+import { bringToFront, currentSheet, sheetsStore } from '../state/sheets.ts';
+import { Mark } from './Mark.tsx';
+import { SettingsDialog } from './SettingsDialog.tsx';
+
+/** What the matrix is, in the words of the trade. */
+function natureOf(field: string, symmetry: string, rows: number, columns: number): string {
+  const shape = rows === columns ? symmetry : 'rectangular';
+  return `${field}, ${shape === 'general' ? 'both triangles given' : shape}`;
+}
+
+/** The title block: which matrix, and for which machine and work everything on the page is reckoned. */
+export function TopLine() {
+  const sheets = useStore(sheetsStore, (s) => s.sheets);
+  const sheet = useStore(sheetsStore, currentSheet);
+  const { target, workload } = useStore(settingsStore);
+  const dialog = useRef<HTMLDialogElement>(null);
+  const summary = sheet?.summary ?? null;
+  return (
+    <>
+      <header className="topline">
+        <h1 className="topline-name">
+          <Mark />
+          Fillcast
+        </h1>
+        <div className="topline-matrix">
+          {sheet === null ? (
+            <p className="soft">A survey, a forecast and a proof for your sparse matrix</p>
+          ) : (
+            <>
+              {sheets.length > 1 ? (
+                <label>
+                  <span className="unseen">Matrix in front</span>
+                  <select value={sheet.id} onChange={(event) => bringToFront(event.target.value)}>
+                    {sheets.map((s) => (
+                      <option key={s.id} value={s.id}>
+                        {s.name}
+                      </option>
+                    ))}
+                  </select>
+                </label>
+              ) : (
+                <strong>{sheet.name}</strong>
+              )}
+              {summary === null ? null : (
+                <span className="topline-facts">
+                  <span className="figure">
+                    {exactly(summary.rows)} × {exactly(summary.columns)}
+                  </span>
+                  <span className="figure" title={`${exactly(summary.entries)} entries`}>
+                    {asText(count(summary.entries))} entries
+                  </span>
+                  <span>{natureOf(summary.field, summary.symmetry, summary.rows, summary.columns)}</span>
+                </span>
+              )}
+              <button type="button" className="plain small" onClick={() => closeSheet(sheet.id)}>
+                {sheet.phase === 'reading' ? 'stop' : 'put away'}
+                <span className="unseen"> {sheet.name}</span>
+              </button>
+            </>
+          )}
+        </div>
+        <button type="button" className="topline-setting" onClick={() => dialog.current?.showModal()}>
+          <span className="small soft">target</span>
+          <span className="figure">
+            {asText(bytes(target.memoryBytes))}
+            <span className="wide-only">
+              {' '}
+              · {asText(rate(target.operationRate))} · {target.cores} {target.cores === 1 ? 'core' : 'cores'}
+            </span>
+          </span>
+        </button>
+        <button type="button" className="topline-setting" onClick={() => dialog.current?.showModal()}>
+          <span className="small soft">workload</span>
+          <span className="figure">
+            {exactly(workload.factorizations)} × {exactly(workload.rightHandSides)}
+            <span className="wide-only small"> factorizations × right-hand sides</span>
+          </span>
+        </button>
+      </header>
+      <SettingsDialog ref={dialog} />
+    </>
+  );
+}

@@ -1,0 +1,12 @@
+import { sheetById, takeAway } from '../state/sheets.ts';
+import { stopAll } from '../state/tasks.ts';
+import { dropMatrix } from '../state/vault.ts';
+
+/** Puts a sheet away: stops what runs for it and frees its memory here and in the workers. */
+export function closeSheet(id: string): void {
+  const sheet = sheetById(id);
+  if (sheet === null) return;
+  stopAll(id);
+  takeAway(id);
+  dropMatrix(sheet.matrix);
+}

@@ -1,0 +1,20 @@
+import type { Progress } from '../../engine/matrix/progress.ts';
+import { example, plates } from './exampleJobs.ts';
+import type { Answer, Ask, Early, Operation } from './protocol.ts';
+import type { Shelf } from './shelf.ts';
+
+/** What a job may use besides what it was asked. */
+export interface Means<E> {
+  readonly shelf: Shelf;
+  readonly progress: Progress;
+  /** hands over a part of the answer ahead of it */
+  readonly early: (part: E, fraction: number, phase: string) => void;
+}
+
+export type Job<K extends Operation> = (ask: Ask<K>, means: Means<Early<K>>) => Answer<K> | Promise<Answer<K>>;
+
+/** Who does what. One line an operation. */
+export const jobs: { readonly [K in Operation]: Job<K> } = {
+  plates,
+  example,
+};

@@ -1,0 +1,57 @@
+/**
+ * Screenshots of the built page in its stages, at three sizes, light and dark, into a folder outside the repository.
+ *   node e2e/shots.mjs FOLDER [stage …]
+ * Serves the folder dist/ itself through the preview server, so build first.
+ */
+import { execFileSync, spawn } from 'node:child_process';
+import { mkdirSync } from 'node:fs';
+import { join, resolve } from 'node:path';
+import { chromium } from '@playwright/test';
+import { stages } from './stages.mjs';
+
+const [folder, ...wanted] = process.argv.slice(2);
+if (folder === undefined) {
+  console.error('usage: node e2e/shots.mjs FOLDER [stage …]');
+  process.exit(2);
+}
+const port = 4183;
+const root = resolve(import.meta.dirname, '..');
+mkdirSync(folder, { recursive: true });
+
+const server = spawn(
+  process.execPath,
+  [join(root, 'node_modules/vite/bin/vite.js'), 'preview', '--port', String(port), '--strictPort'],
+  {
+    cwd: root,
+    stdio: ['ignore', 'pipe', 'inherit'],
+  },
+);
+await new Promise((up) => server.stdout.on('data', (text) => String(text).includes(String(port)) && up()));
+
+const executablePath = execFileSync('which', ['chromium'], { encoding: 'utf8' }).trim();
+const browser = await chromium.launch({ executablePath, args: ['--no-sandbox', '--disable-gpu', '--disable-quic'] });
+const sizes = [
+  { name: 'desk', width: 1280, height: 800, themes: ['light', 'dark'] },
+  { name: 'wide', width: 1920, height: 1080, themes: ['light'] },
+  { name: 'phone', width: 390, height: 844, themes: ['light', 'dark'] },
+];
+try {
+  for (const { name, width, height, themes } of sizes) {
+    for (const colorScheme of themes) {
+      const context = await browser.newContext({ viewport: { width, height }, colorScheme, reducedMotion: 'reduce' });
+      const page = await context.newPage();
+      page.on('pageerror', (error) => console.error(`page error: ${error.message}`));
+      page.on('console', (message) => message.type() === 'error' && console.error(`console: ${message.text()}`));
+      for (const [stage, go] of Object.entries(stages)) {
+        if (wanted.length > 0 && !wanted.includes(stage)) continue;
+        await page.goto(`http://localhost:${port}/`);
+        await go(page, root);
+        await page.screenshot({ path: join(folder, `${stage}-${name}-${colorScheme}.png`) });
+      }
+      await context.close();
+    }
+  }
+} finally {
+  await browser.close();
+  server.kill();
+}
