@@ -1,5 +1,5 @@
+import { magnitudeAt } from '../matrix/modulus.ts';
 import { entryCount, type SparseMatrix, valueWidth } from '../matrix/pattern.ts';
-import { magnitudeAt } from './magnitude.ts';
 import type { Ticker } from './ticker.ts';
 
 /** What one pass over the positions gives; shared by many facts. */

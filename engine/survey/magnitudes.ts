@@ -1,7 +1,8 @@
+import { magnitudeAt } from '../matrix/modulus.ts';
 import { entryCount } from '../matrix/pattern.ts';
 import { type Base, noValues } from './base.ts';
+import { decade } from './decade.ts';
 import { type Fact, fact, markEntry, markWhere, undefinedFact } from './fact.ts';
-import { decade, magnitudeAt } from './magnitude.ts';
 import type { Ticker } from './ticker.ts';
 import { counted, figure, plural } from './wording.ts';
 

@@ -1,5 +1,5 @@
+import { modulus } from '../matrix/modulus.ts';
 import { type SparseMatrix, valueWidth } from '../matrix/pattern.ts';
-import { modulus } from './magnitude.ts';
 import type { Ticker } from './ticker.ts';
 
 /** What comparing each entry with its mirror gives. Square matrices. */

@@ -1,6 +1,6 @@
+import { magnitudeAt } from '../matrix/modulus.ts';
 import { type Base, notFiniteReason, noValues } from './base.ts';
 import { type Fact, fact, markList, undefinedFact } from './fact.ts';
-import { magnitudeAt } from './magnitude.ts';
 import type { Ticker } from './ticker.ts';
 import { counted, figure } from './wording.ts';
 

@@ -1,0 +1,16 @@
+/** Modulus of re + im·i without overflow or underflow on the way, from + × ÷ √ only, so the same everywhere. */
+export function modulus(re: number, im: number): number {
+  const x = Math.abs(re);
+  const y = Math.abs(im);
+  if (y === 0) return x;
+  if (x === 0) return y;
+  const big = x > y ? x : y;
+  if (big === Number.POSITIVE_INFINITY) return big;
+  const ratio = (x > y ? y : x) / big;
+  return big * Math.sqrt(1 + ratio * ratio);
+}
+
+/** |value| of entry p; `width` 1 (real) or 2 (complex, interleaved). */
+export function magnitudeAt(values: Float64Array, width: 1 | 2, p: number): number {
+  return width === 1 ? Math.abs(values[p]) : modulus(values[2 * p], values[2 * p + 1]);
+}
