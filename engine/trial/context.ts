@@ -34,9 +34,10 @@ export class TrialContext {
 
   /** Pattern of A + Aᵀ + I; square only. */
   symmetrised(): Pattern {
-    this.plus ??= this.facts.patternSymmetric && this.facts.zeroDiagonals === 0
-      ? this.input.matrix
-      : symmetrize(this.input.matrix, 'full');
+    this.plus ??=
+      this.facts.patternSymmetric && this.facts.zeroDiagonals === 0
+        ? this.input.matrix
+        : symmetrize(this.input.matrix, 'full');
     return this.plus;
   }
 
