@@ -1,7 +1,51 @@
 import { useStore } from 'zustand';
+import { ImportPanel } from '../intake/ImportPanel.tsx';
 import { Plates } from '../intake/Plates.tsx';
-import { currentSheet, sheetsStore } from '../state/sheets.ts';
+import { currentSheet, type Sheet, sheetsStore } from '../state/sheets.ts';
+import { openPanel, type PanelName, viewStore } from '../state/view.ts';
+import { SurveyPanel } from '../survey/SurveyPanel.tsx';
 import { Ledger } from '../trials/Ledger.tsx';
+import { Tabs } from './Tabs.tsx';
+import { useWide } from './useWide.ts';
+
+const panels: readonly { name: PanelName; label: string }[] = [
+  { name: 'survey', label: 'Survey' },
+  { name: 'import', label: 'Import' },
+];
+const withTrials: typeof panels = [{ name: 'trials', label: 'Trials' }, ...panels];
+
+function Panel({ name, sheet }: { name: PanelName; sheet: Sheet }) {
+  switch (name) {
+    case 'import':
+      return <ImportPanel sheet={sheet} />;
+    case 'trials':
+      return <Ledger sheet={sheet} />;
+    default:
+      return <SurveyPanel sheet={sheet} />;
+  }
+}
+
+/** The ledger with the panels beside it; where the page is narrow, one of them at a time. */
+function Work({ sheet }: { sheet: Sheet }) {
+  const wide = useWide();
+  const asked = useStore(viewStore, (v) => v.panel);
+  const name = wide && asked === 'trials' ? 'survey' : asked;
+  return (
+    <div className="work">
+      {wide ? <Ledger sheet={sheet} /> : null}
+      <Tabs
+        id="panels"
+        label="Panels"
+        tabs={wide ? panels : withTrials}
+        chosen={name}
+        onChoose={openPanel}
+        className={name === 'trials' ? 'tabs-bare' : ''}
+      >
+        <Panel key={sheet.id} name={name} sheet={sheet} />
+      </Tabs>
+    </div>
+  );
+}
 
 /** The lower band: the worked examples while nothing is open, else the ledger of trials with the panels beside it. */
 export function LowerBand() {
@@ -13,7 +57,7 @@ export function LowerBand() {
       tabIndex={-1}
       aria-label={sheet === null ? 'Worked examples' : 'Trials and panels'}
     >
-      {sheet === null ? <Plates /> : <Ledger sheet={sheet} />}
+      {sheet === null ? <Plates /> : <Work sheet={sheet} />}
     </section>
   );
 }

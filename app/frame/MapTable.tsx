@@ -1,11 +1,28 @@
+import { useMemo } from 'react';
+import { useStore } from 'zustand';
+import type { Pane } from '../maps/contract.ts';
+import { Maps } from '../maps/Maps.tsx';
 import type { Sheet } from '../state/sheets.ts';
-import { Neatline } from './Neatline.tsx';
+import { viewStore } from '../state/view.ts';
+import { sayChoice } from '../trials/explain.ts';
 
-/** The maps of a sheet. */
+/** The maps that a sheet shows now: the original first, then the trials put on the sheet. */
+function panesOf({ matrix, shown, trials }: Sheet): readonly Pane[] {
+  const original: Pane = { id: matrix, letter: '', title: 'as read', matrix, trial: null };
+  return [
+    original,
+    ...shown.flatMap((id) => {
+      const trial = trials.find((t) => t.id === id);
+      if (trial === undefined || trial.state !== 'done') return [];
+      return [{ id, letter: trial.letter, title: sayChoice(trial.choice), matrix, trial: id }];
+    }),
+  ];
+}
+
+/** What lies on the sheet once a matrix is there. */
 export function MapTable({ sheet }: { sheet: Sheet }) {
-  return (
-    <Neatline>
-      <p>{sheet.name}</p>
-    </Neatline>
-  );
+  const pointing = useStore(viewStore, (v) => v.pointing);
+  const panes = useMemo(() => panesOf(sheet), [sheet]);
+  if (sheet.summary === null) return null;
+  return <Maps panes={panes} rows={sheet.summary.rows} columns={sheet.summary.columns} pointing={pointing} />;
 }

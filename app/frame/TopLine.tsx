@@ -4,13 +4,18 @@ import { asText, bytes, count, exactly, rate } from '../figures/format.ts';
 import { closeSheet } from '../intake/closing.ts';
 import { settingsStore } from '../state/settings.ts';
 import { bringToFront, currentSheet, sheetsStore } from '../state/sheets.ts';
+import type { MatrixFacts } from '../workers/rules.ts';
 import { Mark } from './Mark.tsx';
 import { SettingsDialog } from './SettingsDialog.tsx';
 
-/** What the matrix is, in the words of the trade. */
-function natureOf(field: string, symmetry: string, rows: number, columns: number): string {
-  const shape = rows === columns ? symmetry : 'rectangular';
-  return `${field}, ${shape === 'general' ? 'both triangles given' : shape}`;
+/** What the matrix is, in the words of the trade, as measured and not as declared. */
+function natureOf(facts: MatrixFacts): string {
+  const field = facts.complex ? 'complex' : facts.hasValues ? 'real' : 'pattern';
+  if (facts.rows !== facts.columns) return `${field}, rectangular`;
+  if (facts.complex && facts.hermitian) return 'complex hermitian';
+  if (facts.hasValues && facts.valueSymmetric) return `${field} symmetric`;
+  if (facts.patternSymmetric) return facts.hasValues ? `${field}, symmetric in pattern` : 'symmetric pattern';
+  return `${field}, unsymmetric`;
 }
 
 /** The title block: which matrix, and for which machine and work everything on the page is reckoned. */
@@ -54,7 +59,7 @@ export function TopLine() {
                   <span className="figure" title={`${exactly(summary.entries)} entries`}>
                     {asText(count(summary.entries))} entries
                   </span>
-                  <span>{natureOf(summary.field, summary.symmetry, summary.rows, summary.columns)}</span>
+                  {sheet.facts === null ? null : <span>{natureOf(sheet.facts)}</span>}
                 </span>
               )}
               <button type="button" className="plain small" onClick={() => closeSheet(sheet.id)}>

@@ -1,8 +1,10 @@
 import { createStore } from 'zustand/vanilla';
-import { notify, say } from '../state/notices.ts';
-import { changeSheet, layOut, sheetById } from '../state/sheets.ts';
-import { keepMatrix, newMatrixKey, pool } from '../state/vault.ts';
+import { notify } from '../state/notices.ts';
+import { freshSheet, layOut } from '../state/sheets.ts';
+import { follow } from '../state/tasks.ts';
+import { newMatrixKey, pool } from '../state/vault.ts';
 import type { Plate } from '../workers/operations.ts';
+import { settle } from './settle.ts';
 
 /** The worked examples as they get drawn. */
 export const platesStore = createStore<{ readonly plates: readonly Plate[] }>()(() => ({ plates: [] }));
@@ -24,29 +26,8 @@ export function drawPlates(): void {
 /** Lays out a worked example. */
 export function openExample(plate: Plate, size: number): void {
   const key = newMatrixKey();
-  layOut({
-    id: key,
-    name: plate.title,
-    phase: 'reading',
-    reading: { fraction: 0, phase: 'making the example', bytesDone: 0, bytesAll: null, since: performance.now() },
-    failure: null,
-    summary: null,
-    matrix: key,
-    trials: [],
-    shown: [],
-    chosen: null,
-    past: [],
-  });
+  layOut(freshSheet(key, plate.title, 'making the example', null));
   const task = pool.run('example', { key, id: plate.id, size }, { lane: 'long', priority: 10, makes: key });
-  void task.reply.then((reply) => {
-    if (sheetById(key) === null) return;
-    if (!reply.ok) {
-      changeSheet(key, () => ({ phase: 'failed', failure: reply.failure, reading: null }));
-      return;
-    }
-    const { summary, loaded } = reply.value;
-    keepMatrix(key, loaded);
-    changeSheet(key, () => ({ phase: 'ready', summary, name: summary.name, reading: null }));
-    say(`${summary.name} is ready.`);
-  });
+  follow(key, 'read', task);
+  void task.reply.then((reply) => settle(key, reply));
 }

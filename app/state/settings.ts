@@ -49,7 +49,7 @@ export const defaultSettings: Settings = {
   workload: { factorizations: 1, rightHandSides: 1 },
   theme: 'system',
   columns: [],
-  ledgerShare: 0.44,
+  ledgerShare: 0.46,
 };
 
 const storageKey = 'fillcast-settings';

@@ -1,5 +1,8 @@
 import { createStore } from 'zustand/vanilla';
+import type { Fact } from '../../engine/survey/fact.ts';
+import type { FactName } from '../../engine/survey/survey.ts';
 import type { Failure, MatrixKey } from '../workers/protocol.ts';
+import type { MatrixFacts } from '../workers/rules.ts';
 import type { ImportSummary } from '../workers/summary.ts';
 import type { Trial, TrialId } from './trial.ts';
 
@@ -15,6 +18,15 @@ export interface ReadingState {
   readonly since: number;
 }
 
+/** How far the survey is, and what it has found. */
+export interface SurveyState {
+  readonly state: 'waiting' | 'running' | 'done' | 'failed';
+  readonly fraction: number;
+  readonly phase: string;
+  readonly failure: Failure | null;
+  readonly facts: { readonly [Name in FactName]?: Fact<unknown> };
+}
+
 /** One matrix laid out on the table. A sheet is being read, or failed with a reason, or holds a matrix. */
 export interface Sheet {
   readonly id: SheetId;
@@ -23,7 +35,12 @@ export interface Sheet {
   readonly reading: ReadingState | null;
   readonly failure: Failure | null;
   readonly summary: ImportSummary | null;
+  /** what decides which trials suit; null until the matrix is there */
+  readonly facts: MatrixFacts | null;
+  readonly survey: SurveyState;
   readonly matrix: MatrixKey;
+  /** stamps given away so far */
+  readonly stamps: number;
   readonly trials: readonly Trial[];
   /** trials whose maps are on the sheet, in order; at most three beside the original */
   readonly shown: readonly TrialId[];
@@ -53,6 +70,26 @@ export function sheetById(id: SheetId): Sheet | null {
 /** Changes a sheet; a sheet that has been closed in the meantime stays closed. */
 export function changeSheet(id: SheetId, change: (sheet: Sheet) => Partial<Sheet>): void {
   sheetsStore.setState(({ sheets }) => ({ sheets: sheets.map((s) => (s.id === id ? { ...s, ...change(s) } : s)) }));
+}
+
+/** A sheet on which nothing has come in yet. */
+export function freshSheet(id: SheetId, name: string, phase: string, bytesAll: number | null): Sheet {
+  return {
+    id,
+    name,
+    phase: 'reading',
+    reading: { fraction: 0, phase, bytesDone: 0, bytesAll, since: performance.now() },
+    failure: null,
+    summary: null,
+    facts: null,
+    survey: { state: 'waiting', fraction: 0, phase: '', failure: null, facts: {} },
+    matrix: id,
+    stamps: 0,
+    trials: [],
+    shown: [],
+    chosen: null,
+    past: [],
+  };
 }
 
 /** Brings a sheet to the front. */

@@ -1,5 +1,6 @@
 import type { Choice } from '../../engine/trial/choice.ts';
 import type { Failure } from '../workers/protocol.ts';
+import type { TrialFigures } from '../workers/trialFigures.ts';
 
 export type TrialId = string;
 
@@ -9,11 +10,16 @@ export interface Trial {
   /** A, B, C …: the stamp on its maps */
   readonly letter: string;
   readonly choice: Choice;
+  /** unknowns kept at the end, original numbering, 0-based, increasing; empty for none */
+  readonly heldLast: readonly number[];
   /** waiting for a worker, running, finished, stopped by the user, or ended by a failure (which says why) */
   readonly state: 'waiting' | 'running' | 'done' | 'stopped' | 'failed';
   readonly fraction: number;
   readonly phase: string;
   readonly failure: Failure | null;
+  readonly figures: TrialFigures | null;
+  /** remarks of the ordering and the forecast */
+  readonly notes: readonly string[];
 }
 
 /** The k-th stamp: A … Z, AA, AB … */
@@ -21,4 +27,13 @@ export function letterOf(k: number): string {
   let out = '';
   for (let q = k; q >= 0; q = Math.floor(q / 26) - 1) out = String.fromCharCode(65 + (q % 26)) + out;
   return out;
+}
+
+/** Two trials with the same key are the same trial. */
+export function choiceKey(choice: Choice, heldLast: readonly number[]): string {
+  const c = choice;
+  const threshold = c.pivoting === 'threshold' ? c.threshold : '';
+  return [c.ordering, c.factorization, c.pivoting, threshold, c.scaling, c.matching, c.blocks, c.seed, heldLast].join(
+    '|',
+  );
 }

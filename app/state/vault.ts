@@ -1,14 +1,18 @@
-import type { Loaded } from '../../engine/exchange/loaded.ts';
+import type { TrialResult } from '../workers/operations.ts';
 import { WorkerPool } from '../workers/pool.ts';
 import type { MatrixKey } from '../workers/protocol.ts';
+import type { Stock } from '../workers/stock.ts';
+import type { TrialId } from './trial.ts';
 
 /**
  * The big arrays of the page, beside the stores and out of React's sight: held by reference, handed to workers, never looked into.
  */
-const matrices = new Map<MatrixKey, Loaded>();
+const stocks = new Map<MatrixKey, Stock>();
+/** Results of trials, with their orders and counts. */
+const results = new Map<TrialId, TrialResult>();
 
 /** The one pool of workers. */
-export const pool = new WorkerPool((key) => matrices.get(key) ?? null);
+export const pool = new WorkerPool((key) => stocks.get(key) ?? null);
 
 let made = 0;
 
@@ -17,12 +21,39 @@ export function newMatrixKey(): MatrixKey {
   return `m${++made}`;
 }
 
-export function keepMatrix(key: MatrixKey, loaded: Loaded): void {
-  matrices.set(key, loaded);
+export function keepStock(key: MatrixKey, stock: Stock): void {
+  stocks.set(key, stock);
+}
+
+/** What lies under a key, or null once it is put away. */
+export function stockOf(key: MatrixKey): Stock | null {
+  return stocks.get(key) ?? null;
+}
+
+/** Changes what came beside a matrix; workers are supplied anew. */
+export function changeStock(key: MatrixKey, change: Partial<Stock>): void {
+  const stock = stocks.get(key);
+  if (stock === undefined) return;
+  stocks.set(key, { ...stock, ...change });
+  pool.forget(key);
 }
 
 /** Lets go of a matrix here and in all workers. */
-export function dropMatrix(key: MatrixKey): void {
-  matrices.delete(key);
+export function dropStock(key: MatrixKey): void {
+  stocks.delete(key);
   pool.forget(key);
+}
+
+export function keepResult(id: TrialId, result: TrialResult): void {
+  results.set(id, result);
+}
+
+/** The result of a finished trial, or null. */
+export function resultOf(id: TrialId): TrialResult | null {
+  return results.get(id) ?? null;
+}
+
+/** Lets go of the results of trials that can no longer be called back. */
+export function dropResults(ids: readonly TrialId[]): void {
+  for (const id of ids) results.delete(id);
 }

@@ -1,4 +1,3 @@
-import type { Loaded } from '../../engine/exchange/loaded.ts';
 import { Cancelled } from '../../engine/matrix/progress.ts';
 import { failureOf } from './failure.ts';
 import { jobs } from './jobs.ts';
@@ -22,7 +21,7 @@ export class Desk implements WorkerDesk {
     hear: (heard: Heard<Early<K>>) => void,
   ): Promise<Reply<Answer<K>>> {
     try {
-      for (const { key, loaded } of supply) this.shelf.put(key, loaded);
+      for (const { key, stock } of supply) this.shelf.put(key, stock);
       let last = Number.NEGATIVE_INFINITY;
       const progress = (fraction: number, phase: string) => {
         if (stop !== null && Atomics.load(stop, 0) === 1) throw new Cancelled();
@@ -43,5 +42,3 @@ export class Desk implements WorkerDesk {
     this.shelf.drop(key);
   }
 }
-
-export type { Loaded };

@@ -1,6 +1,7 @@
 import type { Loaded } from '../../engine/exchange/loaded.ts';
 import { entryCount, type Pattern, type SparseMatrix } from '../../engine/matrix/pattern.ts';
 import { exampleById, workedExamples } from '../../engine/problems/examples.ts';
+import { factsOf } from '../../engine/trial/facts.ts';
 import type { Job } from './jobs.ts';
 import type { Plate } from './operations.ts';
 import { shareLoaded } from './shared.ts';
@@ -24,10 +25,12 @@ export const example: Job<'example'> = ({ key, id, size }, { shelf, progress }) 
   const found = exampleById(id);
   if (found === undefined) throw new Error(`no worked example "${id}"`);
   progress(0, 'making the example');
-  const { matrix } = found.make(size);
+  const { matrix, coordinates } = found.make(size);
   const loaded = shareLoaded(asLoaded(`${found.title.toLowerCase()}, ${size}`, matrix));
-  shelf.put(key, loaded);
-  return { summary: summarize(loaded, (performance.now() - started) / 1e3), loaded };
+  const stock = { loaded, coordinates, imported: null };
+  shelf.put(key, stock);
+  const facts = factsOf(matrix, coordinates !== null);
+  return { summary: summarize(loaded, (performance.now() - started) / 1e3), facts, stock };
 };
 
 /** A matrix made on the spot, in the form of one that was read. */

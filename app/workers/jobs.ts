@@ -1,7 +1,10 @@
 import type { Progress } from '../../engine/matrix/progress.ts';
 import { example, plates } from './exampleJobs.ts';
+import { density } from './pictureJobs.ts';
 import type { Answer, Ask, Early, Operation } from './protocol.ts';
 import type { Shelf } from './shelf.ts';
+import { survey } from './surveyJobs.ts';
+import { trial } from './trialJobs.ts';
 
 /** What a job may use besides what it was asked. */
 export interface Means<E> {
@@ -17,4 +20,7 @@ export type Job<K extends Operation> = (ask: Ask<K>, means: Means<Early<K>>) => 
 export const jobs: { readonly [K in Operation]: Job<K> } = {
   plates,
   example,
+  survey,
+  density,
+  trial,
 };

@@ -1,6 +1,12 @@
-import type { Loaded } from '../../engine/exchange/loaded.ts';
+import type { DensityMap } from '../../engine/picture/window.ts';
+import type { Survey } from '../../engine/survey/survey.ts';
+import type { Choice } from '../../engine/trial/choice.ts';
+import type { MatrixFacts } from '../../engine/trial/rules.ts';
 import type { MatrixKey } from './protocol.ts';
+import type { Stock } from './stock.ts';
 import type { ImportSummary } from './summary.ts';
+import type { NamedFact } from './surveyJobs.ts';
+import type { TrialFigures } from './trialFigures.ts';
 
 /** A worked example drawn small: how full each cell of a coarse raster is. */
 export interface Plate {
@@ -22,7 +28,19 @@ export interface Plate {
 /** A matrix that has come in: what the page says about it, and the arrays that it passes on without looking into them. */
 export interface Arrival {
   readonly summary: ImportSummary;
-  readonly loaded: Loaded;
+  readonly facts: MatrixFacts;
+  readonly stock: Stock;
+}
+
+export interface TrialResult {
+  readonly order: Int32Array;
+}
+
+/** A finished trial: its figures for the ledger, and the arrays that maps, proof and handover go on with. */
+export interface TrialAnswer {
+  readonly figures: TrialFigures;
+  readonly notes: readonly string[];
+  readonly result: TrialResult;
 }
 
 /** Every operation of a worker: what it asks, what it answers, what it can say early. */
@@ -31,4 +49,10 @@ export interface Operations {
   plates: { ask: { cells: number }; answer: readonly Plate[]; early: Plate };
   /** a worked example made on the spot */
   example: { ask: { key: MatrixKey; id: string; size: number }; answer: Arrival; early: never };
+  /** the facts of a matrix */
+  survey: { ask: { key: MatrixKey }; answer: Survey; early: NamedFact };
+  /** how full the cells of a raster over the whole matrix are */
+  density: { ask: { key: MatrixKey; cells: number }; answer: DensityMap; early: never };
+  /** one trial: ordering, analysis, forecast */
+  trial: { ask: { key: MatrixKey; choice: Choice; heldLast: Int32Array }; answer: TrialAnswer; early: never };
 }

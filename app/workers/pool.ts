@@ -1,5 +1,4 @@
 import { proxy, type Remote, wrap } from 'comlink';
-import type { Loaded } from '../../engine/exchange/loaded.ts';
 import { plain } from './failure.ts';
 import type {
   Answer,
@@ -14,6 +13,7 @@ import type {
   WorkerDesk,
 } from './protocol.ts';
 import { canShare } from './shared.ts';
+import type { Stock } from './stock.ts';
 
 /** `quick` answers the hand (pictures, hover) and is never kept waiting by a `long` one (reading, ordering, proving). */
 export type Lane = 'quick' | 'long';
@@ -98,10 +98,10 @@ export class WorkerPool {
   private waiting: Waiting[] = [];
   private serial = 0;
   private readonly limit: Record<Lane, number>;
-  private readonly matrixOf: (key: MatrixKey) => Loaded | null;
+  private readonly stockOf: (key: MatrixKey) => Stock | null;
 
-  constructor(matrixOf: (key: MatrixKey) => Loaded | null, threads = navigator.hardwareConcurrency || 2) {
-    this.matrixOf = matrixOf;
+  constructor(stockOf: (key: MatrixKey) => Stock | null, threads = navigator.hardwareConcurrency || 2) {
+    this.stockOf = stockOf;
     this.limit = { quick: 1, long: Math.max(1, Math.min(mostWorkers, threads - 1)) };
   }
 
@@ -176,13 +176,13 @@ export class WorkerPool {
 
   /** The matrices among `keys` that the worker does not hold yet; from now on it does. */
   private supplyFor(clerk: Clerk, keys: readonly MatrixKey[]): Supply {
-    const supply: { key: MatrixKey; loaded: Loaded }[] = [];
+    const supply: { key: MatrixKey; stock: Stock }[] = [];
     for (const key of keys) {
       if (clerk.holds.has(key)) continue;
-      const loaded = this.matrixOf(key);
-      if (loaded === null) continue;
+      const stock = this.stockOf(key);
+      if (stock === null) continue;
       clerk.holds.add(key);
-      supply.push({ key, loaded });
+      supply.push({ key, stock });
     }
     return supply;
   }

@@ -2,9 +2,10 @@
  * The one vocabulary between the page and its workers. Only plain data and typed arrays cross; no functions, no classes.
  * An operation is a name with what it asks and what it answers; jobs.ts does them, pool.ts hands them out.
  */
-import type { Loaded } from '../../engine/exchange/loaded.ts';
+
 import type { FaultKind, FaultPlace, Repair } from '../../engine/matrix/fault.ts';
 import type { Operations } from './operations.ts';
+import type { Stock } from './stock.ts';
 
 export type Operation = keyof Operations;
 export type Ask<K extends Operation> = Operations[K]['ask'];
@@ -40,7 +41,7 @@ export interface Heard<E> {
 }
 
 /** Matrices that an operation needs and that its worker does not hold yet. */
-export type Supply = readonly { readonly key: MatrixKey; readonly loaded: Loaded }[];
+export type Supply = readonly { readonly key: MatrixKey; readonly stock: Stock }[];
 
 /** What a worker offers. Every call ends in one reply; nothing is thrown across. */
 export interface WorkerDesk {

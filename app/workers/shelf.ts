@@ -1,27 +1,28 @@
-import type { Loaded } from '../../engine/exchange/loaded.ts';
 import type { MatrixKey } from './protocol.ts';
+import type { Stock } from './stock.ts';
 
 /** The matrices a worker holds, and what it has derived from them and may need again. */
 export class Shelf {
-  private readonly held = new Map<MatrixKey, { loaded: Loaded; derived: Map<string, unknown> }>();
+  private readonly held = new Map<MatrixKey, { stock: Stock; derived: Map<string, unknown> }>();
 
-  put(key: MatrixKey, loaded: Loaded): void {
-    this.held.set(key, { loaded, derived: new Map() });
+  /** Puts a matrix on the shelf; what was derived from an older one of the same key is thrown away. */
+  put(key: MatrixKey, stock: Stock): void {
+    this.held.set(key, { stock, derived: new Map() });
   }
 
   drop(key: MatrixKey): void {
     this.held.delete(key);
   }
 
-  /** The matrix under a key; a missing one is a fault of the program, not of the user. */
-  get(key: MatrixKey): Loaded {
-    return this.entry(key).loaded;
+  /** What lies under a key; a missing one is a fault of the program, not of the user. */
+  get(key: MatrixKey): Stock {
+    return this.entry(key).stock;
   }
 
   /** Something derived from a matrix, made once and kept as long as the matrix. */
-  derive<T>(key: MatrixKey, name: string, make: (loaded: Loaded) => T): T {
-    const { loaded, derived } = this.entry(key);
-    if (!derived.has(name)) derived.set(name, make(loaded));
+  derive<T>(key: MatrixKey, name: string, make: (stock: Stock) => T): T {
+    const { stock, derived } = this.entry(key);
+    if (!derived.has(name)) derived.set(name, make(stock));
     return derived.get(name) as T;
   }
 
