@@ -12,4 +12,18 @@ export const stages = {
       .waitFor();
     await page.waitForTimeout(1500);
   },
+  async add(page) {
+    await stages.trials(page);
+    await page.getByRole('button', { name: 'Add a trial…' }).click();
+    await page.waitForTimeout(200);
+  },
+  async settings(page) {
+    await page.getByRole('button', { name: /^target/ }).click();
+    await page.waitForTimeout(200);
+  },
+  async term(page) {
+    await stages.trials(page);
+    await page.getByRole('button', { name: 'fill ratio: what it means' }).click();
+    await page.waitForTimeout(200);
+  },
 };

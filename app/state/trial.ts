@@ -1,6 +1,6 @@
 import type { Choice } from '../../engine/trial/choice.ts';
 import type { Failure } from '../workers/protocol.ts';
-import type { TrialFigures } from '../workers/trialFigures.ts';
+import type { TrialOutcome } from '../workers/trialFigures.ts';
 
 export type TrialId = string;
 
@@ -17,9 +17,8 @@ export interface Trial {
   readonly fraction: number;
   readonly phase: string;
   readonly failure: Failure | null;
-  readonly figures: TrialFigures | null;
-  /** remarks of the ordering and the forecast */
-  readonly notes: readonly string[];
+  /** counts and seconds once finished */
+  readonly outcome: TrialOutcome | null;
 }
 
 /** The k-th stamp: A … Z, AA, AB … */

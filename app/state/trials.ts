@@ -62,8 +62,7 @@ export function addTrials(id: SheetId, plans: readonly TrialPlan[], undoable = t
       fraction: 0,
       phase: '',
       failure: null,
-      figures: null,
-      notes: [],
+      outcome: null,
     });
   }
   if (added.length === 0) return 0;
@@ -98,8 +97,7 @@ export function startTrial(id: SheetId, trialId: TrialId): void {
     if (sheetById(id)?.trials.every((t) => t.id !== trialId)) return;
     if (reply.ok) {
       keepResult(trialId, reply.value.result);
-      const { figures, notes } = reply.value;
-      changeTrial(id, trialId, { state: 'done', fraction: 1, figures, notes });
+      changeTrial(id, trialId, { state: 'done', fraction: 1, outcome: reply.value.outcome });
       say(`Trial ${trial.letter} is ready.`);
       showFirst(id, trialId);
       return;

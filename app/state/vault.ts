@@ -1,4 +1,4 @@
-import type { TrialResult } from '../workers/operations.ts';
+import type { TrialResult } from '../../engine/trial/result.ts';
 import { WorkerPool } from '../workers/pool.ts';
 import type { MatrixKey } from '../workers/protocol.ts';
 import type { Stock } from '../workers/stock.ts';

@@ -59,13 +59,15 @@ export function AddTrial({ ref, sheet }: { ref: RefObject<HTMLDialogElement | nu
   const advised = sheet.facts === null ? null : advisedFactorization(sheet.facts);
   const [picked, setPicked] = useState<FactorizationName | null>(null);
   const factorization = picked ?? advised?.factorization ?? 'cholesky';
-  const [tried, setTried] = useState<readonly OrderingName[]>(['nested-dissection']);
+  const [asked, setTried] = useState<readonly OrderingName[] | null>(null);
   const [changes, setChanges] = useState<Partial<Choice>>({});
   const [held, setHeld] = useState('');
   const plan = defaultChoice(factorization, 'natural', changes);
   const unknowns = parseUnknowns(held, sheet.summary?.columns ?? 0);
   const heldLast = unknowns.ok ? unknowns.list : [];
   const reasons = new Map(orderingNames.map((o) => [o, refusal(sheet, { ...plan, ordering: o }, heldLast)] as const));
+  const free = orderingNames.find((o) => reasons.get(o) === null);
+  const tried = asked ?? (free === undefined ? [] : [free]);
   const good = tried.filter((o) => reasons.get(o) === null);
   const change = (more: Partial<Choice>) => setChanges((c) => ({ ...c, ...more }));
   const ready = good.length > 0 && unknowns.ok;
@@ -121,7 +123,7 @@ export function AddTrial({ ref, sheet }: { ref: RefObject<HTMLDialogElement | nu
                     type="checkbox"
                     disabled={why !== null}
                     checked={why === null && tried.includes(name)}
-                    onChange={() => setTried((t) => (t.includes(name) ? t.filter((o) => o !== name) : [...t, name]))}
+                    onChange={() => setTried(tried.includes(name) ? tried.filter((o) => o !== name) : [...tried, name])}
                   />
                   <span>
                     {orderings[name].name}

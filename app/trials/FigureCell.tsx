@@ -32,6 +32,7 @@ export function FigureCell(props: CellProps) {
   const read = () => onRead(readingOf(props));
   const common = {
     'data-cell': `${place.row},${place.column}`,
+    'data-head': column.head,
     tabIndex: focused ? 0 : -1,
     onMouseEnter: read,
     onFocus: () => {

@@ -8,6 +8,7 @@ import { LedgerHead } from './LedgerHead.tsx';
 import { LedgerRow } from './LedgerRow.tsx';
 import { LedgerTools } from './LedgerTools.tsx';
 import { type Order, rangeOf, sortTrials } from './order.ts';
+import { useFigures } from './useFigures.ts';
 import { useGridKeys } from './useGridKeys.ts';
 
 /** What the reading line under the ledger says about the figure in hand. */
@@ -24,12 +25,13 @@ export function Ledger({ sheet }: { sheet: Sheet }) {
   const [order, setOrder] = useState<Order>({ by: null, falling: false });
   const [reading, setReading] = useState<Reading | null>(null);
   const columns = useMemo(() => chosenColumns(names), [names]);
-  const trials = useMemo(() => sortTrials(sheet.trials, order), [sheet.trials, order]);
-  const ranges = useMemo(() => columns.map((c) => rangeOf(sheet.trials, c, limit)), [sheet.trials, columns, limit]);
+  const figures = useFigures(sheet);
+  const trials = useMemo(() => sortTrials(sheet.trials, figures, order), [sheet.trials, figures, order]);
+  const ranges = useMemo(() => columns.map((c) => rangeOf([...figures.values()], c, limit)), [figures, columns, limit]);
   const keys = useGridKeys(trials.length, columns.length);
   return (
     <div className="ledger">
-      <LedgerTools sheet={sheet} columns={columns} trials={trials} />
+      <LedgerTools sheet={sheet} columns={columns} trials={trials} figures={figures} />
       <div className="ledger-scroll">
         {/* biome-ignore lint/a11y/noNoninteractiveElementToInteractiveRole: a table whose cells take the focus is a grid */}
         <table role="grid" aria-label="Trials" className="ledger-table" onKeyDown={keys.onKeyDown}>
@@ -40,6 +42,7 @@ export function Ledger({ sheet }: { sheet: Sheet }) {
                 key={trial.id}
                 sheet={sheet}
                 trial={trial}
+                figures={figures.get(trial.id) ?? null}
                 columns={columns}
                 ranges={ranges}
                 row={row}

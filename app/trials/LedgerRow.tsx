@@ -2,6 +2,7 @@ import { asText, percent } from '../figures/format.ts';
 import type { Sheet } from '../state/sheets.ts';
 import type { Trial } from '../state/trial.ts';
 import { chooseTrial, removeTrial, startTrial, stopTrial, toggleShown } from '../state/trials.ts';
+import type { TrialFigures } from '../workers/trialFigures.ts';
 import type { Column } from './columns.ts';
 import { orderings, sayChoice, sayFactorization } from './explain.ts';
 import { FigureCell } from './FigureCell.tsx';
@@ -12,6 +13,8 @@ import type { GridPlace } from './useGridKeys.ts';
 interface RowProps {
   readonly sheet: Sheet;
   readonly trial: Trial;
+  /** null until the trial is finished */
+  readonly figures: TrialFigures | null;
   readonly columns: readonly Column[];
   readonly ranges: readonly Range[];
   readonly row: number;
@@ -50,8 +53,8 @@ function Story({ sheet, trial, span }: { sheet: Sheet; trial: Trial; span: numbe
 
 /** One trial. Pressing its name chooses it for proof and handover; the box puts its maps on the sheet. */
 export function LedgerRow(props: RowProps) {
-  const { sheet, trial, columns, ranges, row, focusAt, onFocusAt, onRead } = props;
-  const { id, letter, choice, heldLast, state, figures } = trial;
+  const { sheet, trial, figures, columns, ranges, row, focusAt, onFocusAt, onRead } = props;
+  const { id, letter, choice, heldLast, state } = trial;
   const chosen = sheet.chosen === id;
   const shown = sheet.shown.includes(id);
   const running = state === 'running' || state === 'waiting';

@@ -7,16 +7,22 @@ import { AddTrial } from './AddTrial.tsx';
 import { ChooseColumns } from './ChooseColumns.tsx';
 import type { Column } from './columns.ts';
 import { ledgerAsCsv } from './csv.ts';
+import type { Figures } from './order.ts';
 
 /** What can be done with the ledger as a whole. */
-export function LedgerTools(props: { sheet: Sheet; columns: readonly Column[]; trials: readonly Trial[] }) {
-  const { sheet, columns, trials } = props;
+export function LedgerTools(props: {
+  sheet: Sheet;
+  columns: readonly Column[];
+  trials: readonly Trial[];
+  figures: Figures;
+}) {
+  const { sheet, columns, trials, figures } = props;
   const adding = useRef<HTMLDialogElement>(null);
   const choosing = useRef<HTMLDialogElement>(null);
   const last = sheet.past[sheet.past.length - 1];
   const copy = async () => {
     try {
-      await navigator.clipboard.writeText(ledgerAsCsv(trials, columns));
+      await navigator.clipboard.writeText(ledgerAsCsv(trials, figures, columns));
       notify('The ledger is on the clipboard as CSV, with exact figures.');
     } catch {
       notify(

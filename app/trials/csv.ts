@@ -1,5 +1,6 @@
 import type { Trial } from '../state/trial.ts';
 import type { Column } from './columns.ts';
+import type { Figures } from './order.ts';
 
 /** A field as RFC 4180 has it: quoted where it must be. */
 function field(text: string): string {
@@ -7,7 +8,7 @@ function field(text: string): string {
 }
 
 /** The ledger as CSV (RFC 4180): all options of each trial, then the exact figures with their kinds; empty where not defined. */
-export function ledgerAsCsv(trials: readonly Trial[], columns: readonly Column[]): string {
+export function ledgerAsCsv(trials: readonly Trial[], figures: Figures, columns: readonly Column[]): string {
   const options = [
     'ordering',
     'factorization',
@@ -24,7 +25,7 @@ export function ledgerAsCsv(trials: readonly Trial[], columns: readonly Column[]
     ...options.map((o) => String(t.choice[o])),
     String(t.heldLast.length),
     ...columns.flatMap((c) => {
-      const figure = t.figures?.[c.name];
+      const figure = figures.get(t.id)?.[c.name];
       return figure === undefined || figure.value === null ? ['', ''] : [String(figure.value), figure.kind];
     }),
   ]);

@@ -1,6 +1,9 @@
-import type { Trial } from '../state/trial.ts';
-import type { FigureName } from '../workers/trialFigures.ts';
+import type { Trial, TrialId } from '../state/trial.ts';
+import type { FigureName, TrialFigures } from '../workers/trialFigures.ts';
 import type { Column } from './columns.ts';
+
+/** The figures of the finished trials. */
+export type Figures = ReadonlyMap<TrialId, TrialFigures>;
 
 /** How the ledger is sorted; by null keeps the order in which the trials were added. */
 export interface Order {
@@ -9,9 +12,9 @@ export interface Order {
 }
 
 /** The trials in the order asked for; those without the figure come last either way. */
-export function sortTrials(trials: readonly Trial[], { by, falling }: Order): readonly Trial[] {
+export function sortTrials(trials: readonly Trial[], figures: Figures, { by, falling }: Order): readonly Trial[] {
   if (by === null) return trials;
-  const key = (t: Trial) => t.figures?.[by].value ?? null;
+  const key = (t: Trial) => figures.get(t.id)?.[by].value ?? null;
   return [...trials].sort((a, b) => {
     const x = key(a);
     const y = key(b);
@@ -31,8 +34,8 @@ export interface Range {
 }
 
 /** Best and largest figure of a column over the finished trials; the limit counts if it is in reach of the bars. */
-export function rangeOf(trials: readonly Trial[], column: Column, memoryBytes: number): Range {
-  const values = trials.flatMap((t) => t.figures?.[column.name].value ?? []);
+export function rangeOf(trials: readonly TrialFigures[], column: Column, memoryBytes: number): Range {
+  const values = trials.flatMap((t) => t[column.name].value ?? []);
   if (values.length === 0) return { best: null, most: 0, limit: null };
   const most = Math.max(...values);
   const best = column.best === null ? null : column.best === 'least' ? Math.min(...values) : most;

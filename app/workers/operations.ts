@@ -1,12 +1,13 @@
 import type { DensityMap } from '../../engine/picture/window.ts';
 import type { Survey } from '../../engine/survey/survey.ts';
 import type { Choice } from '../../engine/trial/choice.ts';
+import type { TrialResult } from '../../engine/trial/result.ts';
 import type { MatrixFacts } from '../../engine/trial/rules.ts';
 import type { MatrixKey } from './protocol.ts';
 import type { Stock } from './stock.ts';
 import type { ImportSummary } from './summary.ts';
 import type { NamedFact } from './surveyJobs.ts';
-import type { TrialFigures } from './trialFigures.ts';
+import type { TrialOutcome } from './trialFigures.ts';
 
 /** A worked example drawn small: how full each cell of a coarse raster is. */
 export interface Plate {
@@ -32,14 +33,9 @@ export interface Arrival {
   readonly stock: Stock;
 }
 
-export interface TrialResult {
-  readonly order: Int32Array;
-}
-
 /** A finished trial: its figures for the ledger, and the arrays that maps, proof and handover go on with. */
 export interface TrialAnswer {
-  readonly figures: TrialFigures;
-  readonly notes: readonly string[];
+  readonly outcome: TrialOutcome;
   readonly result: TrialResult;
 }
 
