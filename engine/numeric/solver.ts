@@ -31,7 +31,7 @@ export interface PivotCounts {
   readonly perturbed: number;
 }
 
-/** A pivot with its address. For a 2×2 pivot: the eigenvalue or, complex symmetric, the diagonal entry of smallest modulus. */
+/** A pivot with its address. Of a 2×2 pivot: its two eigenvalues or, complex symmetric, the root of its determinant. */
 export interface PivotPlace {
   /** modulus */
   readonly modulus: number;

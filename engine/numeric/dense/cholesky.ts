@@ -1,0 +1,80 @@
+import type { DenseKernels } from './kernels.ts';
+import { type DenseWorkspace, panelWidth, sweepRows, updateDepth } from './workspace.ts';
+
+/**
+ * Partial Cholesky of a front, right-looking in blocks: columns 0 … p − 1 of the panel become those of L. In place.
+ * @param x panel of m rows, addressed by (base, ld, shrink), see `DenseKernels`.
+ * @param tick called after every block with the operations done.
+ * @returns −1, or the first column whose pivot is not positive.
+ */
+export function partialCholesky(
+  kernels: DenseKernels,
+  work: DenseWorkspace,
+  x: Float64Array,
+  base: number,
+  ld: number,
+  shrink: number,
+  m: number,
+  p: number,
+  tick: (operations: number) => void,
+): number {
+  for (let k0 = 0; k0 < p; k0 += panelWidth) {
+    const k1 = k0 + panelWidth < p ? k0 + panelWidth : p;
+    const bad = kernels.cholesky(x, base, ld, shrink, k0, k1, m);
+    if (bad >= 0) return bad;
+    if (k1 === p) break;
+    const left = work.left;
+    kernels.pack(left, 0, x, base, ld, shrink, k0, k1, k1, m, false);
+    let right = left;
+    if (kernels.width === 2) {
+      right = work.right;
+      kernels.pack(right, 0, x, base, ld, shrink, k0, k1, k1, p, true);
+    }
+    const depth = k1 - k0;
+    for (let i0 = k1; i0 < m; i0 += sweepRows) {
+      const i1 = i0 + sweepRows < m ? i0 + sweepRows : m;
+      kernels.update(x, base, ld, shrink, i0, i1, k1, p, true, left, (i0 - k1) * depth, right, 0, depth);
+    }
+    tick(2 * depth * (m - k1) * (p - k1));
+  }
+  return -1;
+}
+
+/**
+ * C := C − L·Lᴴ on the lower triangle of the contribution block, L being rows i0 … m − 1 of columns 0 … p − 1 of the panel.
+ * @param c contribution block addressed by (cBase, cLd, cShrink), its row and column 0 belonging to panel row i0.
+ */
+export function updateFromCholesky(
+  kernels: DenseKernels,
+  work: DenseWorkspace,
+  x: Float64Array,
+  base: number,
+  ld: number,
+  shrink: number,
+  m: number,
+  p: number,
+  i0: number,
+  c: Float64Array,
+  cBase: number,
+  cLd: number,
+  cShrink: number,
+  tick: (operations: number) => void,
+): void {
+  const size = m - i0;
+  for (let k0 = 0; k0 < p; k0 += updateDepth) {
+    const k1 = k0 + updateDepth < p ? k0 + updateDepth : p;
+    const depth = k1 - k0;
+    const left = work.left;
+    kernels.pack(left, 0, x, base, ld, shrink, k0, k1, i0, m, false);
+    let right = left;
+    if (kernels.width === 2) {
+      right = work.right;
+      kernels.pack(right, 0, x, base, ld, shrink, k0, k1, i0, m, true);
+    }
+    for (let r0 = 0; r0 < size; r0 += sweepRows) {
+      const r1 = r0 + sweepRows < size ? r0 + sweepRows : size;
+      kernels.update(c, cBase, cLd, cShrink, r0, r1, 0, r1, true, left, r0 * depth, right, 0, depth);
+      tick(2 * depth * (r1 - r0) * r1);
+    }
+  }
+}
