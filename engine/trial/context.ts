@@ -1,9 +1,10 @@
 import { type BlockTriangularForm, blockTriangularForm } from '../graph/blockTriangular.ts';
+import { type Classes, connectedComponents } from '../graph/components.ts';
+import { type Graph, graphOf } from '../graph/graph.ts';
 import { type Matching, maximumTransversal } from '../graph/transversal.ts';
-import type { Pattern, SparseMatrix } from '../matrix/pattern.ts';
+import type { SparseMatrix } from '../matrix/pattern.ts';
 import type { NewToOld } from '../matrix/permutation.ts';
 import { noProgress, type Progress } from '../matrix/progress.ts';
-import { symmetrize } from '../matrix/symmetrize.ts';
 import type { NodeCoordinates } from '../problems/examples/example.ts';
 import { factsOf } from './facts.ts';
 import type { MatrixFacts } from './rules.ts';
@@ -23,7 +24,8 @@ export interface TrialInput {
 export class TrialContext {
   readonly input: TrialInput;
   readonly facts: MatrixFacts;
-  private plus: Pattern | null = null;
+  private plus: Graph | null = null;
+  private parts: Classes | null = null;
   private matched: Matching | null = null;
   private blocks: BlockTriangularForm | null = null;
 
@@ -32,13 +34,16 @@ export class TrialContext {
     this.facts = factsOf(input.matrix, input.coordinates !== null, input.imported !== null);
   }
 
-  /** Pattern of A + Aᵀ + I; square only. */
-  symmetrised(): Pattern {
-    this.plus ??=
-      this.facts.patternSymmetric && this.facts.zeroDiagonals === 0
-        ? this.input.matrix
-        : symmetrize(this.input.matrix, 'full');
+  /** The graph of A + Aᵀ; square only. */
+  graph(): Graph {
+    this.plus ??= graphOf(this.input.matrix);
     return this.plus;
+  }
+
+  /** Connected components of A + Aᵀ. */
+  components(): Classes {
+    this.parts ??= connectedComponents(this.input.matrix);
+    return this.parts;
   }
 
   /** A maximum matching of rows and columns. */

@@ -19,6 +19,7 @@ export function factsOf(a: SparseMatrix, hasCoordinates = false, hasImported = f
     rows: a.rows,
     columns: a.columns,
     entries: entryCount(a),
+    offDiagonalEntries: entryCount(a) - diagonal.stored,
     hasValues: a.values !== null,
     complex,
     ...mirror,
@@ -54,15 +55,17 @@ function mirrorFacts(a: SparseMatrix): { patternSymmetric: boolean; valueSymmetr
   return { patternSymmetric, valueSymmetric, hermitian };
 }
 
-function diagonalFacts(a: SparseMatrix): { zero: number; allPositive: boolean } {
+function diagonalFacts(a: SparseMatrix): { zero: number; stored: number; allPositive: boolean } {
   const n = Math.min(a.rows, a.columns);
   const complex = a.field === 'complex';
   let zero = 0;
   let positive = 0;
+  let storedCount = 0;
   for (let j = 0; j < n; j++) {
     let stored = false;
     for (let p = a.columnPointer[j]; p < a.columnPointer[j + 1]; p++) {
       if (a.rowIndex[p] !== j) continue;
+      storedCount++;
       if (a.values === null) stored = true;
       else {
         const re = complex ? a.values[2 * p] : a.values[p];
@@ -73,5 +76,5 @@ function diagonalFacts(a: SparseMatrix): { zero: number; allPositive: boolean } 
     }
     if (!stored) zero++;
   }
-  return { zero, allPositive: positive === n };
+  return { zero, stored: storedCount, allPositive: positive === n };
 }

@@ -5,6 +5,8 @@ export interface MatrixFacts {
   readonly rows: number;
   readonly columns: number;
   readonly entries: number;
+  /** entries off the diagonal */
+  readonly offDiagonalEntries: number;
   readonly hasValues: boolean;
   readonly complex: boolean;
   /** pattern of A equals that of Aᵀ */

@@ -1,0 +1,45 @@
+import type { NewToOld } from '../matrix/permutation.ts';
+import type { Choice } from './choice.ts';
+
+/** Counts of one trial. What is undefined is null, with a reason in `reasons` under the same name. */
+export interface TrialCounts {
+  /** nnz(L) for Cholesky and LDLᵀ, nnz(L) + nnz(U) − n for LU; diagonal blocks only in block triangular form */
+  readonly factorEntries: number | null;
+  /** LU: entries of L and of U, diagonals included */
+  readonly lowerEntries: number | null;
+  readonly upperEntries: number | null;
+  /** entries outside the diagonal blocks, which are never factorized; 0 without blocks */
+  readonly offDiagonalBlockEntries: number;
+  /** LU with pivoting: the expected count, and a range proven for every pivot sequence of that kind */
+  readonly expected: { readonly factorEntries: number } | null;
+  readonly range: { readonly factorEntries: readonly [number, number] } | null;
+  readonly operations: number | null;
+  readonly treeHeight: number | null;
+  readonly largestFront: number | null;
+  /** compressed columns, 8-byte values (16 complex), 4-byte indices, 8-byte pointers */
+  readonly factorBytes: number | null;
+  /** of the requested order */
+  readonly bandwidth: number | null;
+  readonly envelope: number | null;
+  readonly reasons: Readonly<Record<string, string>>;
+}
+
+/** A finished trial. Plain data and typed arrays. */
+export interface TrialResult {
+  readonly choice: Choice;
+  /** the order as the method gave it, new-to-old; columns for column LU */
+  readonly requested: NewToOld;
+  /** the order the counts belong to: `requested`, followed by a postorder where the method takes one */
+  readonly effective: NewToOld;
+  /** column -> parent in the elimination tree (column elimination tree for column LU), −1 at roots; null if not formed */
+  readonly parent: Int32Array | null;
+  /** column -> entries of this column of L, diagonal included; null if not formed */
+  readonly columnCount: Int32Array | null;
+  /** separators of a dissection: positions start … end − 1 of the requested order */
+  readonly separators: readonly { readonly start: number; readonly end: number; readonly level: number }[];
+  readonly notes: readonly string[];
+  /** whether the figures rest on the values (matching or scaling before ordering) and not on the pattern alone */
+  readonly valueDependent: boolean;
+  readonly counts: TrialCounts;
+  readonly seconds: { readonly ordering: number; readonly symbolic: number };
+}
