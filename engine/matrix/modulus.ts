@@ -1,5 +1,8 @@
 /** Modulus of re + im·i without overflow or underflow on the way, from + × ÷ √ only, so the same everywhere. */
 export function modulus(re: number, im: number): number {
+  const square = re * re + im * im;
+  // between these limits neither the squares nor their sum lost anything that matters
+  if (square > 1e-280 && square < 1e280) return Math.sqrt(square);
   const x = Math.abs(re);
   const y = Math.abs(im);
   if (y === 0) return x;

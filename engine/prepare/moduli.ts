@@ -1,4 +1,5 @@
 import { Fault } from '../matrix/fault.ts';
+import { magnitudeAt } from '../matrix/modulus.ts';
 import { entryCount, type SparseMatrix, valueWidth } from '../matrix/pattern.ts';
 
 /** entry -> modulus. A Fault for a pattern without values or a value that is not finite. */
@@ -14,7 +15,7 @@ export function moduliOf(a: SparseMatrix): Float64Array {
   const wide = valueWidth(a) === 2;
   const out = new Float64Array(entryCount(a));
   for (let p = 0; p < out.length; p++) {
-    const m = wide ? modulus(v[2 * p], v[2 * p + 1]) : Math.abs(v[p]);
+    const m = magnitudeAt(v, wide ? 2 : 1, p);
     if (!(m < Infinity)) {
       let column = 0;
       while (a.columnPointer[column + 1] <= p) column++;
@@ -28,13 +29,4 @@ export function moduliOf(a: SparseMatrix): Float64Array {
     out[p] = m;
   }
   return out;
-}
-
-function modulus(re: number, im: number): number {
-  const a = Math.abs(re);
-  const b = Math.abs(im);
-  const big = a > b ? a : b;
-  if (!(big > 0 && big < Infinity)) return big;
-  const small = (a > b ? b : a) / big;
-  return big * Math.sqrt(1 + small * small);
 }

@@ -1,4 +1,5 @@
-import { largestModulus, modulus } from './modulus.ts';
+import { modulus } from '../../matrix/modulus.ts';
+import { largestModulus } from './largestModulus.ts';
 import { multiplyModuliInto } from './product.ts';
 import type { MeasuredSystem } from './system.ts';
 

@@ -3,7 +3,7 @@ import { transpose } from '../../matrix/transpose.ts';
 import type { Solver } from '../solver.ts';
 import { normwiseRatio } from './backwardError.ts';
 import { doubledWorkspace, residualDoubledInto } from './doubled.ts';
-import { largestModulus } from './modulus.ts';
+import { largestModulus } from './largestModulus.ts';
 import { estimateOneNorm, type Operator } from './oneNorm.ts';
 import { type MeasuredSystem, measuredSystem, solveVectorInPlace } from './system.ts';
 

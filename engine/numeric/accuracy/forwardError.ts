@@ -1,7 +1,8 @@
+import { modulus } from '../../matrix/modulus.ts';
 import { noProgress, type Progress } from '../../matrix/progress.ts';
 import type { Solver } from '../solver.ts';
 import { type Estimate, toEstimate, watchedInverse } from './condition.ts';
-import { largestModulus, modulus } from './modulus.ts';
+import { largestModulus } from './largestModulus.ts';
 import { estimateOneNorm } from './oneNorm.ts';
 import type { RefinedColumn } from './refine.ts';
 import type { MeasuredSystem } from './system.ts';

@@ -1,8 +1,8 @@
+import { modulus } from '../../matrix/modulus.ts';
 import type { SparseMatrix } from '../../matrix/pattern.ts';
 import { Random } from '../../matrix/random.ts';
 import type { Solver } from '../solver.ts';
 import { watchedInverse } from './condition.ts';
-import { modulus } from './modulus.ts';
 import { multiplyInto } from './product.ts';
 import { measuredSystem } from './system.ts';
 

@@ -1,5 +1,5 @@
+import { modulus } from '../../matrix/modulus.ts';
 import { entryCount, type SparseMatrix, valueWidth } from '../../matrix/pattern.ts';
-import { modulus } from './modulus.ts';
 import { valuesOf } from './product.ts';
 
 /** Norms of a matrix, from the moduli of its entries. */

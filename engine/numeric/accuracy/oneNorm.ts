@@ -1,4 +1,4 @@
-import { modulus } from './modulus.ts';
+import { modulus } from '../../matrix/modulus.ts';
 
 /** A linear operator known only by its action, n numbers in, n numbers out, in place; interleaved when complex. */
 export interface Operator {

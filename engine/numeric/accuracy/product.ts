@@ -1,6 +1,6 @@
 import { Fault } from '../../matrix/fault.ts';
+import { modulus } from '../../matrix/modulus.ts';
 import { type SparseMatrix, valueWidth } from '../../matrix/pattern.ts';
-import { modulus } from './modulus.ts';
 
 /**
  * Products of a sparse matrix and a dense vector in working precision, for real and complex matrices.

@@ -1,8 +1,8 @@
 import { Fault } from '../../matrix/fault.ts';
+import { modulus } from '../../matrix/modulus.ts';
 import { entryCount, type SparseMatrix, valueWidth } from '../../matrix/pattern.ts';
 import { asNewToOld, type NewToOld } from '../../matrix/permutation.ts';
 import type { Progress } from '../../matrix/progress.ts';
-import { modulus } from '../accuracy/modulus.ts';
 import { valuesOf } from '../accuracy/product.ts';
 import { divideColumn, updateColumn } from './columnKernels.ts';
 import type { ColumnFactors, SweepFacts } from './data.ts';

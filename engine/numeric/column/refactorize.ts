@@ -1,14 +1,14 @@
+import { difference, samePattern } from '../../matrix/difference.ts';
 import { Fault } from '../../matrix/fault.ts';
+import { modulus } from '../../matrix/modulus.ts';
 import { entryCount, type SparseMatrix, valueWidth } from '../../matrix/pattern.ts';
 import { positionOf } from '../../matrix/permutation.ts';
 import { noProgress, type Progress } from '../../matrix/progress.ts';
-import { modulus } from '../accuracy/modulus.ts';
 import { valuesOf } from '../accuracy/product.ts';
 import { refuseNotFinite } from '../accuracy/system.ts';
 import { type ColumnFactor, columnFactorOf } from './columnFactor.ts';
 import { divideInto } from './columnKernels.ts';
 import type { ColumnFactors } from './data.ts';
-import { comparePatterns } from './samePattern.ts';
 import { scaleInto } from './scatter.ts';
 
 /** When a refactorization with kept pivots gives up. */
@@ -34,15 +34,7 @@ export function refactorizeColumns(
   options: RefactorizeOptions = {},
   progress: Progress = noProgress,
 ): ColumnFactor {
-  const difference = comparePatterns(first, matrix);
-  if (!difference.same || (valueWidth(matrix) === 2) !== factor.complex) {
-    throw new Fault(
-      'input',
-      'pattern-differs',
-      `Same pattern: no (${difference.added} new positions, ${difference.gone} gone). A fresh analysis is needed.`,
-      difference.first ?? {},
-    );
-  }
+  refuseOtherPattern(factor, first, matrix);
   refuseNotFinite(matrix);
   const old = factor.factors;
   const scaled = old.rowScaling !== null || old.columnScaling !== null;
@@ -67,6 +59,21 @@ export function refactorizeColumns(
   const parts = [fresh.lower, fresh.upper, fresh.offDiagonal];
   const bytes = parts.reduce((sum, part) => sum + part.values.byteLength, 0) + fresh.pivots.byteLength + x.byteLength;
   return columnFactorOf(fresh, facts, factor.plannedRow, bytes + (scaled ? values.byteLength : 0));
+}
+
+function refuseOtherPattern(factor: ColumnFactor, first: SparseMatrix, matrix: SparseMatrix): void {
+  const sameField = (valueWidth(matrix) === 2) === factor.complex;
+  if (samePattern(first, matrix) && sameField) return;
+  const { added, missing } = difference(first, matrix);
+  const place = added.count > 0 ? added.first : missing.first;
+  throw new Fault(
+    'input',
+    'pattern-differs',
+    sameField
+      ? `Same pattern: no (${added.count} new positions, ${missing.count} gone). A fresh analysis is needed.`
+      : 'One matrix is complex and the other real. A fresh analysis is needed.',
+    place.length > 0 ? { row: place[0], column: place[1] } : {},
+  );
 }
 
 interface Limits {

@@ -1,4 +1,4 @@
-import { modulus } from '../accuracy/modulus.ts';
+import { modulus } from '../../matrix/modulus.ts';
 import type { PivotPlace, PivotReport } from '../solver.ts';
 import type { ColumnFactors, SweepFacts } from './data.ts';
 

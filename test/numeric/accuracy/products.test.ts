@@ -1,8 +1,9 @@
 import { Matrix } from 'ml-matrix';
 import { expect, test } from 'vitest';
+import { modulus } from '../../../engine/matrix/modulus.ts';
 import { Random } from '../../../engine/matrix/random.ts';
 import { doubledWorkspace, residualDoubledInto, residualInto } from '../../../engine/numeric/accuracy/doubled.ts';
-import { largestModulus, modulus } from '../../../engine/numeric/accuracy/modulus.ts';
+import { largestModulus } from '../../../engine/numeric/accuracy/largestModulus.ts';
 import { firstNotFinite, normsOf } from '../../../engine/numeric/accuracy/norms.ts';
 import { multiplyInto, multiplyModuliInto, multiplyTransposedInto } from '../../../engine/numeric/accuracy/product.ts';
 import { randomMatrix } from '../../support/random.ts';

@@ -6,7 +6,6 @@ import { Random } from '../../../engine/matrix/random.ts';
 import { factorizeColumns } from '../../../engine/numeric/column/columnFactor.ts';
 import { columnPlan } from '../../../engine/numeric/column/columnPlan.ts';
 import { refactorizeColumns } from '../../../engine/numeric/column/refactorize.ts';
-import { comparePatterns } from '../../../engine/numeric/column/samePattern.ts';
 import { randomMatrix, randomOrder } from '../../support/random.ts';
 import { sparseOf } from '../accuracy/denseSolver.ts';
 import { denseBackwardError, factorizationError } from './support.ts';
@@ -76,22 +75,4 @@ test('another pattern is refused with counts; unfit values ask for a new analysi
   const tiny = { ...a, values: Float64Array.of(1e-9, 1, 1, 4, 1, 1, 4) };
   expect(faultOf(() => refactorizeColumns(factor, a, tiny))?.code).toBe('pivots-unfit');
   expect(faultOf(() => refactorizeColumns(factor, a, tiny, { growthLimit: 1e12, multiplierLimit: 1e12 }))).toBeNull();
-});
-
-test('patterns compared by hand', () => {
-  const a = sparseOf([
-    [1, 0],
-    [1, 1],
-  ]);
-  expect(comparePatterns(a, a)).toEqual({ same: true, added: 0, gone: 0, first: null });
-  const b = sparseOf([
-    [1, 1],
-    [0, 1],
-  ]);
-  expect(comparePatterns(a, b)).toEqual({ same: false, added: 1, gone: 1, first: { row: 1, column: 0 } });
-  const wider = sparseOf([
-    [1, 0, 7],
-    [1, 1, 0],
-  ]);
-  expect(comparePatterns(a, wider)).toEqual({ same: false, added: 1, gone: 0, first: { row: 0, column: 2 } });
 });
