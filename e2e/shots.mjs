@@ -3,9 +3,9 @@
  *   node e2e/shots.mjs FOLDER [stage …]
  * Serves the folder dist/ itself through the preview server, so build first.
  */
-import { execFileSync, spawn } from 'node:child_process';
-import { mkdirSync } from 'node:fs';
-import { join, resolve } from 'node:path';
+import { spawn } from 'node:child_process';
+import { existsSync, mkdirSync } from 'node:fs';
+import { delimiter, join, resolve } from 'node:path';
 import { chromium } from '@playwright/test';
 import { stages } from './stages.mjs';
 
@@ -28,7 +28,9 @@ const server = spawn(
 );
 await new Promise((up) => server.stdout.on('data', (text) => String(text).includes(String(port)) && up()));
 
-const executablePath = execFileSync('which', ['chromium'], { encoding: 'utf8' }).trim();
+const executablePath = process.env.PATH.split(delimiter)
+  .map((at) => join(at, 'chromium'))
+  .find((path) => existsSync(path));
 const browser = await chromium.launch({ executablePath, args: ['--no-sandbox', '--disable-gpu', '--disable-quic'] });
 const sizes = [
   { name: 'desk', width: 1280, height: 800, themes: ['light', 'dark'] },

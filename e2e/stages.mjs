@@ -12,6 +12,11 @@ export const stages = {
       .waitFor();
     await page.waitForTimeout(1500);
   },
+  async comparison(page) {
+    await stages.trials(page);
+    await page.getByRole('tab', { name: 'Comparison' }).click();
+    await page.waitForTimeout(200);
+  },
   async add(page) {
     await stages.trials(page);
     await page.getByRole('button', { name: 'Add a trial…' }).click();

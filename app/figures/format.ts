@@ -21,10 +21,10 @@ export function exactly(x: number): string {
 /** Three significant digits without an exponent, for 0.001 ≤ |x| < 1000. */
 export function threeDigits(x: number): string {
   if (x === 0) return '0';
-  const a = Math.abs(x);
-  const decimals = Math.max(0, 2 - Math.floor(Math.log10(a)));
-  const text = x.toFixed(Math.min(decimals, 6));
-  return Math.abs(Number(text)) >= 1000 ? x.toFixed(0) : text;
+  // rounded first: 0.9999 is written 1.00 and not 1.000
+  const rounded = Number(x.toPrecision(3));
+  const decimals = 2 - Math.floor(Math.log10(Math.abs(rounded)) + 1e-12);
+  return rounded.toFixed(Math.max(0, Math.min(decimals, 8)));
 }
 
 function scaled(x: number, base: number, units: readonly string[]): { digits: string; unit: string } {

@@ -3,8 +3,15 @@ import { useStore } from 'zustand';
 import type { Pane } from '../maps/contract.ts';
 import { Maps } from '../maps/Maps.tsx';
 import type { Sheet } from '../state/sheets.ts';
-import { viewStore } from '../state/view.ts';
+import { type SheetView, setSheetView, viewStore } from '../state/view.ts';
+import { Comparison } from '../trials/Comparison.tsx';
 import { sayChoice } from '../trials/explain.ts';
+import { Tabs } from './Tabs.tsx';
+
+const views: readonly { name: SheetView; label: string }[] = [
+  { name: 'maps', label: 'Maps' },
+  { name: 'comparison', label: 'Comparison' },
+];
 
 /** The maps that a sheet shows now: the original first, then the trials put on the sheet. */
 function panesOf({ matrix, shown, trials }: Sheet): readonly Pane[] {
@@ -22,7 +29,23 @@ function panesOf({ matrix, shown, trials }: Sheet): readonly Pane[] {
 /** What lies on the sheet once a matrix is there. */
 export function MapTable({ sheet }: { sheet: Sheet }) {
   const pointing = useStore(viewStore, (v) => v.pointing);
+  const view = useStore(viewStore, (v) => v.sheetView);
   const panes = useMemo(() => panesOf(sheet), [sheet]);
   if (sheet.summary === null) return null;
-  return <Maps panes={panes} rows={sheet.summary.rows} columns={sheet.summary.columns} pointing={pointing} />;
+  return (
+    <Tabs
+      id="sheet-view"
+      label="What lies on the sheet"
+      tabs={views}
+      chosen={view}
+      onChoose={setSheetView}
+      className="sheet-tabs"
+    >
+      {view === 'comparison' ? (
+        <Comparison sheet={sheet} />
+      ) : (
+        <Maps panes={panes} rows={sheet.summary.rows} columns={sheet.summary.columns} pointing={pointing} />
+      )}
+    </Tabs>
+  );
 }

@@ -4,7 +4,7 @@ import { createStore } from 'zustand/vanilla';
 export type PanelName = 'trials' | 'survey' | 'import' | 'proof' | 'handover';
 
 /** What lies on the sheet. */
-export type SheetView = 'maps' | 'comparison' | 'tree';
+export type SheetView = 'maps' | 'comparison';
 
 /** Lines or entries that a fact, a pivot or a fault points to; the maps mark them and go there. */
 export interface Pointing {
