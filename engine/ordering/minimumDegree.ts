@@ -2,10 +2,11 @@ import { type Graph, graphOf } from '../graph/graph.ts';
 import type { Pattern } from '../matrix/pattern.ts';
 import { asNewToOld } from '../matrix/permutation.ts';
 import type { Progress } from '../matrix/progress.ts';
+import { leadersOf } from './compress.ts';
 import { heldFlags } from './heldLast.ts';
 import { minimumDegreeOfGraph } from './minimumDegreeOfGraph.ts';
+import { ABSENT, FREE, HALO } from './minimumDegreeStart.ts';
 import type { OrderingOptions, OrderingResult } from './ordering.ts';
-import { type Subgraph, withoutVertices } from './subgraph.ts';
 
 export interface MinimumDegreeOptions extends OrderingOptions {
   /**
@@ -30,19 +31,48 @@ export function minimumDegree(pattern: Pattern, options: MinimumDegreeOptions, p
   const held = heldFlags(n, options.heldLast);
   const threshold = options.denseThreshold ?? denseRowThreshold(n);
   const dense = denseVertices(graph, threshold, held);
-  const part: Subgraph = dense.length === 0 ? { graph, vertexOf: null } : withoutVertices(graph, dense);
-  const halo = held === null ? undefined : part.vertexOf === null ? held : part.vertexOf.map((i) => held[i]);
-  const inner = minimumDegreeOfGraph(
-    part.graph,
-    { halo: halo === undefined ? undefined : Uint8Array.from(halo) },
-    progress,
-  );
+  const role = dense.length === 0 && held === null ? null : rolesOf(n, dense, options.heldLast);
+  const { leader, merged } = leadersOf(graph, role);
+  // merging beforehand pays once a fair share of the vertices goes
+  const inner =
+    merged > n / 8
+      ? minimumDegreeOfGraph(graph, { role: role ?? undefined, leader, weight: groupWeights(leader) }, progress)
+      : minimumDegreeOfGraph(graph, { role: role ?? undefined }, progress);
+  const free = merged > n / 8 ? expandLeaders(inner.order, leader) : inner.order;
   const order = new Int32Array(n);
-  const inside = inner.order.length;
-  for (let k = 0; k < inside; k++) order[k] = part.vertexOf === null ? inner.order[k] : part.vertexOf[inner.order[k]];
-  order.set(dense, inside);
-  if (options.heldLast !== undefined) order.set(options.heldLast, inside + dense.length);
+  order.set(free);
+  order.set(dense, free.length);
+  if (options.heldLast !== undefined) order.set(options.heldLast, free.length + dense.length);
   return { order: asNewToOld(order), notes: denseNotes(dense.length, threshold) };
+}
+
+function rolesOf(n: number, dense: Int32Array, heldLast: Int32Array | undefined): Uint8Array {
+  const role = new Uint8Array(n).fill(FREE);
+  if (heldLast !== undefined) for (let k = 0; k < heldLast.length; k++) role[heldLast[k]] = HALO;
+  for (let k = 0; k < dense.length; k++) role[dense[k]] = ABSENT;
+  return role;
+}
+
+function groupWeights(leader: Int32Array): Int32Array {
+  const weight = new Int32Array(leader.length);
+  for (let v = 0; v < leader.length; v++) weight[leader[v]]++;
+  return weight;
+}
+
+/** Each leader followed by the vertices merged into it. */
+function expandLeaders(order: Int32Array, leader: Int32Array): Int32Array {
+  const n = leader.length;
+  const next = new Int32Array(n).fill(-1);
+  for (let v = n - 1; v >= 0; v--) {
+    const u = leader[v];
+    if (u === v) continue;
+    next[v] = next[u];
+    next[u] = v;
+  }
+  const out = new Int32Array(n);
+  let at = 0;
+  for (let k = 0; k < order.length; k++) for (let v = order[k]; v >= 0; v = next[v]) out[at++] = v;
+  return out.subarray(0, at);
 }
 
 /** Vertices with more than `threshold` neighbours that are not held, fewest neighbours first, equal ones by number. */

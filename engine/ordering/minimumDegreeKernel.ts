@@ -208,7 +208,6 @@ export function finishElement(
   interiorEnd: number,
   heads: number,
   haloList: number,
-  queue: boolean,
 ): number {
   const begin = w[p + START];
   const end = begin + w[p + LENGTH];
@@ -224,21 +223,13 @@ export function finishElement(
     let degree = w[i + DEGREE] + weight - wi;
     if (degree > remaining - wi) degree = remaining - wi;
     w[i + DEGREE] = degree;
-    const list = i < interiorEnd ? heads + 2 * degree - NEXT : haloList;
+    const list = i < interiorEnd ? heads + 4 * degree + (wi > 1 ? 2 : 0) - NEXT : haloList;
     if (list < least) least = list;
-    if (queue) {
-      const last = w[list + PREVIOUS];
-      w[i + PREVIOUS] = last;
-      w[i + NEXT] = list;
-      w[last + NEXT] = i;
-      w[list + PREVIOUS] = i;
-    } else {
-      const first = w[list + NEXT];
-      w[i + NEXT] = first;
-      w[i + PREVIOUS] = list;
-      w[first + PREVIOUS] = i;
-      w[list + NEXT] = i;
-    }
+    const last = w[list + PREVIOUS];
+    w[i + PREVIOUS] = last;
+    w[i + NEXT] = list;
+    w[last + NEXT] = i;
+    w[list + PREVIOUS] = i;
   }
   w[p + WEIGHT] = 0;
   w[p + LENGTH] = at - begin;

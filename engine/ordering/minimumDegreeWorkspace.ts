@@ -35,7 +35,7 @@ export const IS_GONE = -2;
 export interface Layout {
   /** vertices */
   readonly order: number;
-  /** degree list d has its pseudo-record at heads + 2d − NEXT, so that NEXT and PREVIOUS of it are its first and last vertex */
+  /** ordering list l has its pseudo-record at heads + 2l − NEXT, so that NEXT and PREVIOUS of it are its first and last vertex */
   readonly heads: number;
   /** hash bucket -> first vertex, −1 when empty; a power of two of them */
   readonly buckets: number;
@@ -47,12 +47,12 @@ export interface Layout {
 }
 
 /**
- * Layout for `order` vertices, `listed` list entries and degrees up to `largestDegree`. The room of one list of `order` entries behind
+ * Layout for `order` vertices, `listed` list entries and `listCount` ordering lists. The room of one list of `order` entries behind
  * the lists suffices for ever: the lists of a quotient graph never outgrow those of the graph, and one element is formed at a time.
  */
-export function layoutFor(order: number, listed: number, largestDegree: number): Layout {
+export function layoutFor(order: number, listed: number, listCount: number): Layout {
   const heads = RECORD * order;
-  const buckets = heads + 2 * (largestDegree + 2);
+  const buckets = heads + 2 * listCount;
   let bucketCount = 1;
   while (bucketCount < order) bucketCount *= 2;
   const lists = buckets + bucketCount;
