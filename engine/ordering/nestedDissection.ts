@@ -8,11 +8,11 @@ import type { OrderingMethod, OrderingOptions } from './ordering.ts';
 export interface NestedDissectionOptions extends OrderingOptions {
   /** pieces of at most so many (merged) unknowns are ordered by minimum degree; default 200 */
   readonly leafSize?: number;
-  /** most share of a piece that one side of a separator may have, 0.5 to 0.9; default 0.6 */
+  /** most share of a piece that one side of a separator may have, 0.5 to 0.9; default 0.7 */
   readonly balance?: number;
-  /** growing starts for a separator of the coarsest graph; default 4 */
+  /** growing starts for a separator of the coarsest graph; default 2 */
   readonly tries?: number;
-  /** independent multilevel runs for each separator; default 3 */
+  /** separators carried up from the coarsest graph; default 4 */
   readonly runs?: number;
 }
 
@@ -34,9 +34,9 @@ export const nestedDissection: OrderingMethod<NestedDissectionOptions> = (patter
   const whole = makeWholeGraph(g, state);
   const settings = {
     leafSize: options.leafSize ?? 200,
-    balance: options.balance ?? 0.6,
-    tries: options.tries ?? 4,
-    runs: options.runs ?? 3,
+    balance: options.balance ?? 0.7,
+    tries: options.tries ?? 2,
+    runs: options.runs ?? 4,
     seed: options.seed ?? 1,
   };
   const { order, separators } = dissect(whole, settings, progress);

@@ -87,7 +87,8 @@ export class LeafOrdering {
         }
       }
       const v = alive[least];
-      alive[least] = alive[--left];
+      left--;
+      for (let a = least; a < left; a++) alive[a] = alive[a + 1];
       target[at++] = member[v];
       let c = leastDegree + weight[member[v]];
       for (let q = weight[member[v]]; q > 0; q--, c--) operations += c * c;

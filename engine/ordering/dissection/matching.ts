@@ -1,3 +1,4 @@
+import { Random } from '../../matrix/random.ts';
 import type { WeightedGraph } from './weightedGraph.ts';
 
 /**
@@ -43,9 +44,11 @@ function matchHeavyEdges(g: WeightedGraph, match: Int32Array, heaviest: number, 
   const { order: n, pointer, neighbour, edgeWeight, weight } = g;
   let lonely = 0;
   let chance = salt | 1;
-  const first = n === 0 ? 0 : (salt >>> 1) % n;
+  const walk = new Int32Array(n);
+  for (let k = 0; k < n; k++) walk[k] = k;
+  new Random(salt).shuffleInPlace(walk);
   for (let k = 0; k < n; k++) {
-    const v = k + first < n ? k + first : k + first - n;
+    const v = walk[k];
     if (match[v] >= 0) continue;
     const begin = pointer[v];
     const end = pointer[v + 1];

@@ -7,23 +7,23 @@ import type { WeightedGraph } from './weightedGraph.ts';
  * separator loses w(v) and gains the weight of those. Every vertex moves at most once a pass, moves that make it worse
  * are tried for a while (hill climbing), then the pass is rolled back to its best point.
  *
- * On entry `w.sizes` and `w.list` describe `part` (`w.measure`); on exit too. `largestSide`: weight no side may pass.
+ * On entry `w.sizes` and `w.list` describe `part` (`w.measure`); on exit too. `balance`: share of both sides no side may pass.
  * `passes`: most passes; `patience`: moves without a new best before a pass ends. Returns the cost reached.
  */
 export function refine(
   g: WeightedGraph,
   part: Int32Array,
   w: SeparationWorkspace,
-  largestSide: number,
+  balance: number,
   passes: number,
   patience: number,
 ): number {
   const { sizes } = w;
-  let best = separationCost(sizes[0], sizes[1], sizes[2], largestSide);
+  let best = separationCost(sizes[0], sizes[1], sizes[2], balance);
   for (let pass = 0; pass < passes; pass++) {
     const before = best;
     prepareGains(g, part, w);
-    best = climb(g, part, w, largestSide, patience, best);
+    best = climb(g, part, w, balance, patience, best);
     if (!(best < before)) break;
   }
   return best;
@@ -56,7 +56,7 @@ function climb(
   g: WeightedGraph,
   part: Int32Array,
   w: SeparationWorkspace,
-  largestSide: number,
+  balance: number,
   patience: number,
   startCost: number,
 ): number {
@@ -74,8 +74,8 @@ function climb(
       if (heap1.size === 0) break;
       t = 1;
     } else if (heap1.size === 0) t = 0;
-    else if (sizes[0] > largestSide) t = 1;
-    else if (sizes[1] > largestSide) t = 0;
+    else if (sizes[0] > balance * (sizes[0] + sizes[1])) t = 1;
+    else if (sizes[1] > balance * (sizes[0] + sizes[1])) t = 0;
     else {
       const difference = heap0.topGain() - heap1.topGain();
       t = difference > 0 ? 0 : difference < 0 ? 1 : sizes[0] <= sizes[1] ? 0 : 1;
@@ -84,7 +84,7 @@ function climb(
     const away = t === 0 ? heap1 : heap0;
     const v = toward.top();
     toward.remove(v);
-    if (sizes[t] + weight[v] > largestSide) continue;
+    if (sizes[t] + weight[v] > balance * (sizes[0] + sizes[1] + weight[v])) continue;
     away.remove(v);
     const o = 1 - t;
     const reachTo = t === 0 ? reach0 : reach1;
@@ -130,7 +130,7 @@ function climb(
     log[logged] = logged - firstPull;
     log[logged + 1] = 2 * v + t;
     logged += 2;
-    const cost = separationCost(sizes[0], sizes[1], sizes[2], largestSide);
+    const cost = separationCost(sizes[0], sizes[1], sizes[2], balance);
     if (cost < best) {
       best = cost;
       bestLogged = logged;

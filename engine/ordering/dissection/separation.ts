@@ -54,21 +54,21 @@ export class SeparationWorkspace {
 
 /**
  * What a separation costs: the separator's weight, more when the sides are uneven (as the evaluator of Ashcraft & Liu
- * 1998, with another form of the balance term), far more when a side passes `largestSide`. Smaller is better.
+ * 1998, with another form of the balance term), far more when a side has more than the share `balance` of the two. Smaller is better.
  */
-export function separationCost(size0: number, size1: number, separator: number, largestSide: number): number {
+export function separationCost(size0: number, size1: number, separator: number, balance: number): number {
   const larger = size0 > size1 ? size0 : size1;
   const smaller = size0 > size1 ? size1 : size0;
   const total = larger + smaller;
   if (total === 0) return separator;
   const uneven = (larger - smaller) / total;
   let cost = separator * (1 + UNEVEN_WEIGHT * uneven * uneven) + 0.01 * uneven;
-  if (larger > largestSide) cost += 2 * (larger - largestSide);
+  if (larger > balance * total) cost += 2 * (larger - balance * total);
   return cost;
 }
 
-/** A split of 60 to 40 counts as much as a separator larger by 2 %. */
-const UNEVEN_WEIGHT = 0.5;
+/** A split of 60 to 40 counts as much as a separator larger by 1.2 %. */
+const UNEVEN_WEIGHT = 0.3;
 
 /** Names the first edge between the two sides, the first value that is no part, or returns null: the separator separates. */
 export function separationFlaw(g: WeightedGraph, part: ArrayLike<number>): string | null {
