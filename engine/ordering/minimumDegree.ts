@@ -5,7 +5,7 @@ import type { Progress } from '../matrix/progress.ts';
 import { leadersOf } from './compress.ts';
 import { heldFlags } from './heldLast.ts';
 import { minimumDegreeOfGraph } from './minimumDegreeOfGraph.ts';
-import { ABSENT, FREE, HALO } from './minimumDegreeStart.ts';
+import { ABSENT, FREE, HALO, type StartOptions } from './minimumDegreeStart.ts';
 import type { OrderingOptions, OrderingResult } from './ordering.ts';
 
 export interface MinimumDegreeOptions extends OrderingOptions {
@@ -26,6 +26,18 @@ export function denseRowThreshold(n: number): number {
  * Held-last unknowns take part in the degrees as a halo (Pellegrini, Roman & Amestoy 2000) and follow at the end in the order given.
  */
 export function minimumDegree(pattern: Pattern, options: MinimumDegreeOptions, progress: Progress): OrderingResult {
+  return orderWithDenseLast(pattern, options, (graph, start) => minimumDegreeOfGraph(graph, start, progress).order);
+}
+
+/**
+ * The frame around an elimination on the quotient graph: dense rows are set aside and come behind, held-last unknowns take part as a halo
+ * and come last of all, indistinguishable rows are merged where that pays. `eliminate` orders the free leaders.
+ */
+export function orderWithDenseLast(
+  pattern: Pattern,
+  options: MinimumDegreeOptions,
+  eliminate: (graph: Graph, start: StartOptions) => Int32Array,
+): OrderingResult {
   const n = pattern.columns;
   const graph = graphOf(pattern);
   const held = heldFlags(n, options.heldLast);
@@ -34,11 +46,10 @@ export function minimumDegree(pattern: Pattern, options: MinimumDegreeOptions, p
   const role = dense.length === 0 && held === null ? null : rolesOf(n, dense, options.heldLast);
   const { leader, merged } = leadersOf(graph, role);
   // merging beforehand pays once a fair share of the vertices goes
-  const inner =
+  const free =
     merged > n / 8
-      ? minimumDegreeOfGraph(graph, { role: role ?? undefined, leader, weight: groupWeights(leader) }, progress)
-      : minimumDegreeOfGraph(graph, { role: role ?? undefined }, progress);
-  const free = merged > n / 8 ? expandLeaders(inner.order, leader) : inner.order;
+      ? expandLeaders(eliminate(graph, { role: role ?? undefined, leader, weight: groupWeights(leader) }), leader)
+      : eliminate(graph, { role: role ?? undefined });
   const order = new Int32Array(n);
   order.set(free);
   order.set(dense, free.length);

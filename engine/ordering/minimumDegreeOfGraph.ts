@@ -19,9 +19,10 @@ import {
   collectListsInPlace,
   DEGREE,
   ELEMENTS,
+  FLAG_LIMIT,
   type Layout,
   LENGTH,
-  MARK,
+  lowerMarksInPlace,
   NEXT,
   PREVIOUS,
   RECORD,
@@ -57,9 +58,6 @@ export function minimumDegreeOfGraph(
   return { order: collectOrder(q, pivots), pivots };
 }
 
-/** Marks stay below this, far from the end of 32 bits. */
-const FLAG_LIMIT = 1 << 30;
-
 /** Eliminates every interior vertex, one pivot of least approximate degree after the other. Returns the number of pivots. */
 function eliminateInPlace(
   graph: QuotientGraph,
@@ -94,10 +92,7 @@ function eliminateInPlace(
     }
     formElement(w, p, free);
     w[p + PREVIOUS] = pivots++;
-    if (flag > FLAG_LIMIT) {
-      for (let r = 0; r < RECORD * n; r += RECORD) if (w[r + MARK] !== 0) w[r + MARK] = 1;
-      flag = 2;
-    }
+    if (flag > FLAG_LIMIT) flag = lowerMarksInPlace(w, layout);
     const weight = w[p + DEGREE];
     if (weight > largest) largest = weight;
     weighElements(w, p, flag);

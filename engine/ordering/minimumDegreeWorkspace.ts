@@ -101,3 +101,12 @@ export function collectListsInPlace(w: Int32Array, layout: Layout, free: number)
   }
   return to;
 }
+
+/** Marks stay below this, far from the end of 32 bits. */
+export const FLAG_LIMIT = 1 << 30;
+
+/** Sets the marks in use to 1; returns the next flag. */
+export function lowerMarksInPlace(w: Int32Array, layout: Layout): number {
+  for (let r = 0; r < RECORD * layout.order; r += RECORD) if (w[r + MARK] !== 0) w[r + MARK] = 1;
+  return 2;
+}
