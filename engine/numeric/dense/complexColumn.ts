@@ -26,10 +26,10 @@ function largestCarefully(w: Float64Array, at: number, i0: number, i1: number): 
   let most = -1;
   for (let i = i0; i < i1; i++) {
     const v = Math.hypot(w[2 * (at + i)], w[2 * (at + i) + 1]);
-    if (v > most || v !== v) {
+    if (v > most || Number.isNaN(v)) {
       most = v;
       best = i;
-      if (v !== v) break;
+      if (Number.isNaN(v)) break;
     }
   }
   return best;

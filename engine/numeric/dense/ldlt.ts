@@ -177,7 +177,7 @@ function largestExcept(
 ): number {
   const a = modulusAt(kernels, w, r > from ? kernels.largest(w, 0, from, r) : none);
   const b = modulusAt(kernels, w, kernels.largest(w, 0, r + 1, m));
-  return a > b || a !== a ? a : b;
+  return a > b || Number.isNaN(a) ? a : b;
 }
 
 /** Moves a pivot that is too small out to the given modulus, keeping its sign or direction. */

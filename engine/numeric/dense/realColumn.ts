@@ -10,10 +10,10 @@ export function largestReal(w: Float64Array, at: number, i0: number, i1: number)
   for (let i = i0; i < i1; i++) {
     const v = Math.abs(w[at + i]);
     // a NaN must win, so that it is seen
-    if (v > most || v !== v) {
+    if (v > most || Number.isNaN(v)) {
       most = v;
       best = i;
-      if (v !== v) break;
+      if (Number.isNaN(v)) break;
     }
   }
   return best;

@@ -17,19 +17,17 @@ export interface EntryList {
 export function listEntries(run: FrontRun): EntryList {
   const { matrix, rowPosition, columnPosition, size: n, symmetric } = run;
   const start = run.allocator.int32(n + 1);
-  let kept = 0;
   for (let j = 0; j < n; j++) {
     const c = columnPosition[j];
     for (let p = matrix.columnPointer[j]; p < matrix.columnPointer[j + 1]; p++) {
       const r = rowPosition[matrix.rowIndex[p]];
       if (symmetric && r < c) continue;
       start[(r < c ? r : c) + 1]++;
-      kept++;
     }
   }
   for (let c = 0; c < n; c++) start[c + 1] += start[c];
   const next = start.slice(0, n);
-  const entry = run.allocator.int32(symmetric ? kept : entryCount(matrix));
+  const entry = run.allocator.int32(entryCount(matrix));
   const column = run.allocator.int32(entry.length);
   for (let j = 0; j < n; j++) {
     const c = columnPosition[j];

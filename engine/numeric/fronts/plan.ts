@@ -1,5 +1,5 @@
 import type { AssemblyTree } from '../../symbolic/types.ts';
-import { packedLength } from '../dense/workspace.ts';
+import { packedLength, panelWidth } from '../dense/workspace.ts';
 
 /** Sizes of a run in which no pivot is delayed, from the tree alone. In scalars unless said otherwise. */
 export interface FrontPlan {
@@ -62,4 +62,50 @@ export function planFronts(tree: AssemblyTree, symmetric: boolean, held: number)
     extra[parent] += own - p + extra[s];
   }
   return { panels, factor, stack, packed: packedLength(largestFront, mostPivots), largestFront, subscripts };
+}
+
+/** What the peak of a run depends on beside the tree. */
+export interface PeakQuestion {
+  readonly kind: 'cholesky' | 'ldlt' | 'lu';
+  readonly complex: boolean;
+  /** entries of the matrix, both triangles */
+  readonly entries: number;
+  /** held unknowns; default 0 */
+  readonly schur?: number;
+  /** whether rows are paired with columns by a matching; default false */
+  readonly paired?: boolean;
+}
+
+/** Bytes of a run's arrays, by purpose. */
+export interface PeakBytes {
+  /** panels of the factors, with amalgamation padding, and the pivot blocks of LDLᵀ */
+  readonly factors: number;
+  /** stack of contribution blocks at its highest */
+  readonly stack: number;
+  /** packed operands and columns of the dense kernels */
+  readonly workspace: number;
+  /** subscripts, maps and lists */
+  readonly indices: number;
+  readonly total: number;
+}
+
+/** The peak of `PivotReport.peakBytes`, exact when no pivot is delayed: every array of a run is made from these sizes. */
+export function predictPeakBytes(tree: AssemblyTree, question: PeakQuestion): PeakBytes {
+  const { kind, complex, entries } = question;
+  const symmetric = kind !== 'lu';
+  const plan = planFronts(tree, symmetric, question.schur ?? 0);
+  const scalar = complex ? 16 : 8;
+  const n = tree.size;
+  const pivots = kind === 'ldlt' ? 2 * n : 0;
+  const packed = kind === 'cholesky' && !complex ? plan.packed : 2 * plan.packed;
+  const columns = kind === 'cholesky' ? 0 : kind === 'ldlt' ? 2 : 1;
+  const sides = symmetric ? 1 : 2;
+  const perColumn = 1 + (question.paired === true ? 1 : 0) + sides + 1;
+  const perFront = 8;
+  const factors = scalar * (plan.factor + pivots);
+  const stack = scalar * plan.stack;
+  const workspace = scalar * (packed + columns * plan.largestFront + panelWidth + 4);
+  const indices =
+    4 * (perColumn * n + 1 + sides * (plan.largestFront + plan.subscripts) + perFront * tree.count + 4 + 2 * entries);
+  return { factors, stack, workspace, indices, total: factors + stack + workspace + indices };
 }

@@ -1,5 +1,4 @@
 import type { SparseMatrix } from '../../matrix/pattern.ts';
-import { positionOf } from '../../matrix/permutation.ts';
 import type { Progress } from '../../matrix/progress.ts';
 import type { AssemblyTree, FrontRows } from '../../symbolic/types.ts';
 import type { DenseKernels } from '../dense/kernels.ts';
@@ -85,7 +84,8 @@ export class FrontRun {
     this.size = n;
     this.symmetric = options.kind !== 'lu';
     this.plan = planFronts(tree, this.symmetric, options.schur);
-    this.columnPosition = positionOf(tree.order);
+    this.columnPosition = a.int32(n);
+    for (let k = 0; k < n; k++) this.columnPosition[tree.order[k]] = k;
     this.rowPosition = options.rowPermutation === null ? this.columnPosition : a.int32(n);
     if (options.rowPermutation !== null) {
       for (let j = 0; j < n; j++) this.rowPosition[options.rowPermutation[j]] = this.columnPosition[j];
