@@ -1,0 +1,191 @@
+import { Fault } from '../matrix/fault.ts';
+import type { Field, SparseMatrix, Symmetry } from '../matrix/pattern.ts';
+import { type Columns, compressTriplets, expandLower, type MirrorRule } from './columns.ts';
+import type { ImportNote } from './loaded.ts';
+import { TripletStore } from './triplets.ts';
+
+export interface PlaceRequest {
+  readonly file: string;
+  readonly rows: number;
+  readonly columns: number;
+  readonly field: Field;
+  readonly symmetry: Symmetry;
+  readonly duplicates: 'sum' | 'last';
+}
+
+export interface Placed {
+  readonly matrix: SparseMatrix;
+  readonly duplicates: number;
+  readonly notes: readonly ImportNote[];
+}
+
+/** From entries as stored in a file to the matrix in memory: symmetric storage expanded, duplicates merged. */
+export function placeTriplets(t: TripletStore, r: PlaceRequest): Placed {
+  const notes: ImportNote[] = [];
+  if (r.symmetry === 'general') {
+    const c = compressTriplets(t, r.columns, r.duplicates);
+    noteDuplicates(c, r.duplicates, notes);
+    return { matrix: matrixOf(r, c), duplicates: c.duplicates, notes };
+  }
+  const rule: MirrorRule =
+    r.symmetry === 'hermitian' ? 'conjugate' : r.symmetry === 'skew-symmetric' ? 'negate' : 'same';
+  const lower = lowerTriangle(t, r, rule, notes);
+  noteDuplicates(lower, r.duplicates, notes);
+  checkDiagonal(lower, r, t.width);
+  return { matrix: matrixOf(r, expandLower(lower, t.width, rule)), duplicates: lower.duplicates, notes };
+}
+
+function matrixOf(
+  r: PlaceRequest,
+  c: { columnPointer: Int32Array; rowIndex: Int32Array; values: Float64Array },
+): SparseMatrix {
+  return {
+    rows: r.rows,
+    columns: r.columns,
+    columnPointer: c.columnPointer,
+    rowIndex: c.rowIndex,
+    field: r.field,
+    values: r.field === 'pattern' ? null : c.values,
+  };
+}
+
+function noteDuplicates(c: Columns, merge: 'sum' | 'last', notes: ImportNote[]): void {
+  if (c.duplicates === 0) return;
+  const places = c.duplicatePlaces.map(([i, j]) => `(${i + 1}, ${j + 1})`).join(', ');
+  const did = merge === 'sum' ? 'summed' : 'replaced by the last one';
+  notes.push({
+    code: merge === 'sum' ? 'duplicates-summed' : 'duplicates-last',
+    text: `${c.duplicates} entries stood at a place already taken and were ${did}; first places (row, column): ${places}.`,
+  });
+}
+
+/** The lower triangle of symmetric storage, whichever triangle the file holds. */
+function lowerTriangle(t: TripletStore, r: PlaceRequest, rule: MirrorRule, notes: ImportNote[]): Columns {
+  let above = 0;
+  let below = 0;
+  for (let e = 0; e < t.count; e++) {
+    if (t.row[e] < t.column[e]) above++;
+    else if (t.row[e] > t.column[e]) below++;
+  }
+  if (above === 0) return compressTriplets(t, r.columns, r.duplicates);
+  if (below === 0) {
+    notes.push({
+      code: 'upper-triangle',
+      text: `The file stores the upper triangle of a ${r.symmetry} matrix; it was mirrored.`,
+    });
+    mirrorInPlace(t, rule);
+    return compressTriplets(t, r.columns, r.duplicates);
+  }
+  const low = split(t, (i, j) => i >= j);
+  const high = split(t, (i, j) => i < j);
+  mirrorInPlace(high, rule);
+  const a = compressTriplets(low, r.columns, r.duplicates);
+  const b = compressTriplets(high, r.columns, r.duplicates);
+  return mergeTriangles(a, b, t.width, r, notes);
+}
+
+function split(t: TripletStore, keep: (i: number, j: number) => boolean): TripletStore {
+  const out = new TripletStore(t.width, t.count);
+  for (let e = 0; e < t.count; e++) {
+    if (!keep(t.row[e], t.column[e])) continue;
+    const k = out.count++;
+    out.row[k] = t.row[e];
+    out.column[k] = t.column[e];
+    for (let w = 0; w < t.width; w++) out.values[k * t.width + w] = t.values[e * t.width + w];
+  }
+  return out;
+}
+
+/** Moves entries above the diagonal to their mirror place. */
+function mirrorInPlace(t: TripletStore, rule: MirrorRule): void {
+  for (let e = 0; e < t.count; e++) {
+    if (t.row[e] >= t.column[e]) continue;
+    const i = t.row[e];
+    t.row[e] = t.column[e];
+    t.column[e] = i;
+    if (rule === 'negate') for (let w = 0; w < t.width; w++) t.values[e * t.width + w] *= -1;
+    if (rule === 'conjugate' && t.width === 2) t.values[2 * e + 1] *= -1;
+  }
+}
+
+/** Both triangles are stored: mirror entries that agree are used once, others refuse the file. */
+function mergeTriangles(a: Columns, b: Columns, width: 0 | 1 | 2, r: PlaceRequest, notes: ImportNote[]): Columns {
+  const n = r.columns;
+  const pointer = new Int32Array(n + 1);
+  const rowIndex = new Int32Array(a.rowIndex.length + b.rowIndex.length);
+  const values = new Float64Array(rowIndex.length * width);
+  let q = 0;
+  let both = 0;
+  for (let j = 0; j < n; j++) {
+    let p = a.columnPointer[j];
+    let s = b.columnPointer[j];
+    while (p < a.columnPointer[j + 1] || s < b.columnPointer[j + 1]) {
+      const i1 = p < a.columnPointer[j + 1] ? a.rowIndex[p] : r.rows;
+      const i2 = s < b.columnPointer[j + 1] ? b.rowIndex[s] : r.rows;
+      const from = i1 <= i2 ? a : b;
+      const at = i1 <= i2 ? p : s;
+      if (i1 === i2) {
+        both++;
+        for (let w = 0; w < width; w++) {
+          if (
+            !Object.is(a.values[p * width + w], b.values[s * width + w]) &&
+            a.values[p * width + w] !== b.values[s * width + w]
+          ) {
+            throw new Fault(
+              'input',
+              'triangles-differ',
+              `${r.file}: the banner says ${r.symmetry} and both triangles are stored, but the entries at (${i1 + 1}, ${j + 1}) and (${j + 1}, ${i1 + 1}) do not mirror each other. Store one triangle, or declare the file general.`,
+              { file: r.file, row: i1, column: j },
+            );
+          }
+        }
+      }
+      if (i1 <= i2) p++;
+      if (i2 <= i1) s++;
+      rowIndex[q] = Math.min(i1, i2);
+      for (let w = 0; w < width; w++) values[q * width + w] = from.values[at * width + w];
+      q++;
+    }
+    pointer[j + 1] = q;
+  }
+  notes.push({
+    code: 'both-triangles',
+    text: `Both triangles of a ${r.symmetry} matrix are stored; ${both} mirror pairs agree and were used once.`,
+  });
+  return {
+    columnPointer: pointer,
+    rowIndex: rowIndex.slice(0, q),
+    values: values.slice(0, q * width),
+    duplicates: a.duplicates + b.duplicates,
+    duplicatePlaces: [...a.duplicatePlaces, ...b.duplicatePlaces].slice(0, 10),
+  };
+}
+
+/** Skew-symmetric: the diagonal must be zero. Hermitian: it must be real. */
+function checkDiagonal(lower: Columns, r: PlaceRequest, width: 0 | 1 | 2): void {
+  if (r.symmetry === 'symmetric') return;
+  for (let j = 0; j < r.columns; j++) {
+    for (let p = lower.columnPointer[j]; p < lower.columnPointer[j + 1]; p++) {
+      if (lower.rowIndex[p] !== j) continue;
+      const re = width > 0 ? lower.values[p * width] : 0;
+      const im = width === 2 ? lower.values[2 * p + 1] : 0;
+      if (r.symmetry === 'skew-symmetric' && (re !== 0 || im !== 0)) {
+        throw new Fault(
+          'input',
+          'skew-diagonal',
+          `${r.file}: the banner says skew-symmetric, but the diagonal entry ${j + 1} is ${re}${im === 0 ? '' : ` + ${im}i`}; expected zero. Declare the file general, or leave the diagonal out.`,
+          { file: r.file, row: j, column: j },
+        );
+      }
+      if (r.symmetry === 'hermitian' && im !== 0) {
+        throw new Fault(
+          'input',
+          'hermitian-diagonal',
+          `${r.file}: the banner says hermitian, but the diagonal entry ${j + 1} has the imaginary part ${im}; expected 0. If the matrix is complex symmetric, read it so.`,
+          { file: r.file, row: j, column: j },
+          [{ id: 'read-as-symmetric', text: 'Read as complex symmetric' }],
+        );
+      }
+    }
+  }
+}
