@@ -45,3 +45,9 @@ export async function figure(page: Page, ordering: string, column: string): Prom
   const exact = (await cell.getAttribute('title')) ?? '';
   return Number(exact.split(', ')[0].replaceAll(',', '').replace(/ .*/, ''));
 }
+
+/** Opens a worked example, the smallest unless a size is given. */
+export async function openExample(page: Page, title: string, size?: number): Promise<void> {
+  const name = size === undefined ? new RegExp(`^Open ${title}, `) : `Open ${title} with ${size}`;
+  await page.getByRole('button', { name }).click();
+}

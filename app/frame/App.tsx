@@ -7,7 +7,6 @@ import { pool } from '../state/vault.ts';
 import { LowerBand } from './LowerBand.tsx';
 import { Notices } from './Notices.tsx';
 import { SheetBand } from './SheetBand.tsx';
-import { Splitter } from './Splitter.tsx';
 import { TopLine } from './TopLine.tsx';
 
 /** The page: three bands that never scroll away from each other, and a drop target under everything. */
@@ -27,7 +26,6 @@ export function App() {
         </a>
         <TopLine />
         <SheetBand />
-        <Splitter />
         <LowerBand />
       </div>
       <Notices />

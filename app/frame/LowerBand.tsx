@@ -5,6 +5,7 @@ import { currentSheet, type Sheet, sheetsStore } from '../state/sheets.ts';
 import { openPanel, type PanelName, viewStore } from '../state/view.ts';
 import { SurveyPanel } from '../survey/SurveyPanel.tsx';
 import { Ledger } from '../trials/Ledger.tsx';
+import { Splitter } from './Splitter.tsx';
 import { Tabs } from './Tabs.tsx';
 import { useWide } from './useWide.ts';
 
@@ -57,7 +58,8 @@ export function LowerBand() {
       tabIndex={-1}
       aria-label={sheet === null ? 'Worked examples' : 'Trials and panels'}
     >
-      {sheet === null ? <Plates /> : <Work sheet={sheet} />}
+      <Splitter />
+      <div className="lower-content">{sheet === null ? <Plates /> : <Work sheet={sheet} />}</div>
     </section>
   );
 }

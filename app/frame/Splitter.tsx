@@ -27,7 +27,7 @@ export function Splitter() {
         event.currentTarget.setPointerCapture(event.pointerId);
       }}
       onPointerMove={(event) => {
-        const frame = event.currentTarget.parentElement?.getBoundingClientRect();
+        const frame = event.currentTarget.closest('.app')?.getBoundingClientRect();
         if (holding.current && frame !== undefined) set((frame.bottom - event.clientY) / frame.height);
       }}
       onPointerUp={() => {

@@ -47,7 +47,7 @@ function isolated(kept: Response): Response {
 async function answer(request: Request): Promise<Response> {
   const store = await caches.open(storeName);
   const wanted = request.mode === 'navigate' ? './index.html' : request;
-  const kept = await store.match(wanted, { ignoreSearch: true });
+  const kept = await store.match(wanted, { ignoreSearch: true, ignoreVary: true });
   return kept === undefined ? fetch(request) : isolated(kept);
 }
 

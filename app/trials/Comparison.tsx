@@ -25,6 +25,7 @@ export function Comparison({ sheet }: { sheet: Sheet }) {
   if (trials.length === 0) return <p className="soft">No trial is finished yet.</p>;
   return (
     <div className="comparison">
+      <h2 className="unseen">Comparison of the trials</h2>
       {compared.map((name) => {
         const column = columns.find((c) => c.name === name);
         if (column === undefined) return null;

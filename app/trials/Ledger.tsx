@@ -3,6 +3,8 @@ import { useStore } from 'zustand';
 import { asText, bytes } from '../figures/format.ts';
 import { settingsStore } from '../state/settings.ts';
 import type { Sheet } from '../state/sheets.ts';
+import { AdviceLine } from './AdviceLine.tsx';
+import { adviceOn } from './advice.ts';
 import { type Column, chosenColumns } from './columns.ts';
 import { LedgerHead } from './LedgerHead.tsx';
 import { LedgerRow } from './LedgerRow.tsx';
@@ -32,6 +34,7 @@ export function Ledger({ sheet }: { sheet: Sheet }) {
   return (
     <div className="ledger">
       <LedgerTools sheet={sheet} columns={columns} trials={trials} figures={figures} />
+      {sheet.facts === null ? null : <AdviceLine advice={adviceOn(sheet.facts, sheet.trials, figures, limit)} />}
       <div className="ledger-scroll">
         {/* biome-ignore lint/a11y/noNoninteractiveElementToInteractiveRole: a table whose cells take the focus is a grid */}
         <table role="grid" aria-label="Trials" className="ledger-table" onKeyDown={keys.onKeyDown}>

@@ -2,6 +2,7 @@ import type { Progress } from '../../engine/matrix/progress.ts';
 import { example, plates } from './exampleJobs.ts';
 import { density } from './pictureJobs.ts';
 import type { Answer, Ask, Early, Operation } from './protocol.ts';
+import { read } from './readJobs.ts';
 import type { Shelf } from './shelf.ts';
 import { survey } from './surveyJobs.ts';
 import { trial } from './trialJobs.ts';
@@ -19,6 +20,7 @@ export type Job<K extends Operation> = (ask: Ask<K>, means: Means<Early<K>>) => 
 /** Who does what. One line an operation. */
 export const jobs: { readonly [K in Operation]: Job<K> } = {
   plates,
+  read,
   example,
   survey,
   density,

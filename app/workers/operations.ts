@@ -43,6 +43,12 @@ export interface TrialAnswer {
 export interface Operations {
   /** the worked examples, drawn from their smallest size */
   plates: { ask: { cells: number }; answer: readonly Plate[]; early: Plate };
+  /** a matrix from a file, with the repairs that were chosen */
+  read: {
+    ask: { key: MatrixKey; file: File; repairs: readonly string[] };
+    answer: Arrival;
+    early: { bytesDone: number; bytesAll: number | null };
+  };
   /** a worked example made on the spot */
   example: { ask: { key: MatrixKey; id: string; size: number }; answer: Arrival; early: never };
   /** the facts of a matrix */
