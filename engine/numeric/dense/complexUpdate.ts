@@ -173,7 +173,7 @@ function edgeTile(
   depth: number,
 ): void {
   const s = scratch;
-  s.fill(0);
+  for (let q = 0; q < 8; q++) s[q] = 0;
   tile(s, 0, 4, a, aAt, b, bAt, depth);
   const two = i + 1 < i1;
   const p = c0 + 2 * i;

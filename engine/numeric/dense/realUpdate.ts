@@ -219,7 +219,7 @@ function edgeTile(
   depth: number,
 ): void {
   const s = scratch;
-  s.fill(0);
+  for (let q = 0; q < 16; q++) s[q] = 0;
   tile(s, 0, 4, 8, 12, a, aAt, b, bAt, depth);
   const rows = i1 - i < 4 ? i1 - i : 4;
   const columns = j1 - j < 4 ? j1 - j : 4;

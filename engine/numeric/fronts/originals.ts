@@ -3,7 +3,10 @@ import { entryCount } from '../../matrix/pattern.ts';
 import type { Front } from './front.ts';
 import type { FrontRun } from './run.ts';
 
-/** Entries of a matrix sorted by the elimination step that meets them first (the smaller of internal row and column). */
+/**
+ * Entries of an unsymmetric matrix sorted by the elimination step that meets them first (the smaller of internal row and column): a
+ * front needs rows as well as columns. Symmetric kinds need columns only and read the matrix as it is.
+ */
 export interface EntryList {
   /** internal column -> first entry; length n + 1 */
   readonly start: Int32Array;
@@ -13,15 +16,15 @@ export interface EntryList {
   readonly column: Int32Array;
 }
 
-/** Sorts the entries a run will assemble. Symmetric: those of the lower triangle in the tree's order only. Linear. */
-export function listEntries(run: FrontRun): EntryList {
-  const { matrix, rowPosition, columnPosition, size: n, symmetric } = run;
+/** Sorts the entries a run will assemble; null for the symmetric kinds. Linear. */
+export function listEntries(run: FrontRun): EntryList | null {
+  const { matrix, rowPosition, columnPosition, size: n } = run;
+  if (run.symmetric) return null;
   const start = run.allocator.int32(n + 1);
   for (let j = 0; j < n; j++) {
     const c = columnPosition[j];
     for (let p = matrix.columnPointer[j]; p < matrix.columnPointer[j + 1]; p++) {
       const r = rowPosition[matrix.rowIndex[p]];
-      if (symmetric && r < c) continue;
       start[(r < c ? r : c) + 1]++;
     }
   }
@@ -33,7 +36,6 @@ export function listEntries(run: FrontRun): EntryList {
     const c = columnPosition[j];
     for (let p = matrix.columnPointer[j]; p < matrix.columnPointer[j + 1]; p++) {
       const r = rowPosition[matrix.rowIndex[p]];
-      if (symmetric && r < c) continue;
       const q = next[r < c ? r : c]++;
       entry[q] = p;
       column[q] = j;
@@ -43,45 +45,87 @@ export function listEntries(run: FrontRun): EntryList {
 }
 
 /**
- * Adds the entries of A (scaled) that belong to the fully summed unknowns of the front's own columns to its panel.
+ * Adds the entries of A (scaled) that belong to the front's own fully summed columns (and, for LU, rows) to its panel.
  * Symmetric: lower trapezoid at `base`. LU: columns at `base` (m rows), rows transposed behind them (m − summed rows).
  */
-export function addOriginals(run: FrontRun, list: EntryList, front: Front): void {
-  const { m, summed, base } = front;
-  const behind = base + m * summed;
-  const below = m - summed;
-  for (let q = list.start[front.first]; q < list.start[front.first + front.own]; q++) {
-    const r = rowPlace(run, front, list, q);
-    const c = columnPlace(run, front, list, q);
-    let to: number;
-    if (run.symmetric) to = base + c * m - ((c * (c + 1)) >> 1) + r;
-    else if (c < summed) to = base + c * m + r;
-    else to = behind + r * below + c - summed;
-    addEntry(run, list, q, front.panel, to);
-  }
+export function addOriginals(run: FrontRun, list: EntryList | null, front: Front): void {
+  const end = front.first + front.own;
+  if (list === null) addColumns(run, front, front.panel, front.base, 0, front.first, end);
+  else addListed(run, list, front);
 }
 
 /** Adds the entries of held own columns, which are not eliminated, to the contribution block whose place 0 is front place `gone`. */
-export function addHeldOriginals(run: FrontRun, list: EntryList, front: Front, block: number, gone: number): void {
+export function addHeldOriginals(run: FrontRun, list: EntryList | null, front: Front, block: number, gone: number): void {
   const end = run.tree.firstColumn[front.s + 1];
+  const begin = front.first + front.own;
+  if (list === null) {
+    addColumns(run, front, run.stack.array, block, gone, begin, end);
+    return;
+  }
   const s = front.m - gone;
-  for (let q = list.start[front.first + front.own]; q < list.start[end]; q++) {
-    const r = rowPlace(run, front, list, q) - gone;
-    const c = columnPlace(run, front, list, q) - gone;
-    const to = run.symmetric ? block + c * s - ((c * (c + 1)) >> 1) + r : block + c * s + r;
-    addEntry(run, list, q, run.stack.array, to);
+  for (let q = list.start[begin]; q < list.start[end]; q++) {
+    const r = rowPlace(run, front, run.rowPosition[run.matrix.rowIndex[list.entry[q]]]) - gone;
+    const c = columnPlace(run, front, run.columnPosition[list.column[q]]) - gone;
+    addEntry(run, list.entry[q], list.column[q], run.stack.array, block + c * s + r);
   }
 }
 
-function rowPlace(run: FrontRun, front: Front, list: EntryList, q: number): number {
-  const r = run.rowPosition[run.matrix.rowIndex[list.entry[q]]];
+/** Lower parts of internal columns begin … end − 1 into a packed lower trapezoid at `base` whose place 0 is front place `gone`. */
+function addColumns(
+  run: FrontRun,
+  front: Front,
+  x: Float64Array,
+  base: number,
+  gone: number,
+  begin: number,
+  end: number,
+): void {
+  const { rowPosition, localRow, rowList, tree } = run;
+  const { columnPointer, rowIndex } = run.matrix;
+  const values = run.matrix.values as Float64Array;
+  const plain = run.kernels.width === 1 && run.options.rowScale === null;
+  const s = front.m - gone;
+  for (let c = begin; c < end; c++) {
+    const j = tree.order[c];
+    const column = localRow[c] - gone;
+    const to = base + column * s - ((column * (column + 1)) >> 1) - gone;
+    for (let p = columnPointer[j]; p < columnPointer[j + 1]; p++) {
+      const r = rowPosition[rowIndex[p]];
+      if (r < c) continue;
+      const place = localRow[r];
+      if (place >= front.m || rowList[front.list + place] !== r) throw strange();
+      if (plain) x[to + place] += values[p];
+      else addEntry(run, p, j, x, to + place);
+    }
+  }
+}
+
+function addListed(run: FrontRun, list: EntryList, front: Front): void {
+  const { m, summed, base, panel } = front;
+  const behind = base + m * summed;
+  const below = m - summed;
+  const { rowPosition, columnPosition } = run;
+  const { rowIndex } = run.matrix;
+  const values = run.matrix.values as Float64Array;
+  const { rowScale, columnScale } = run.options;
+  const plain = run.kernels.width === 1 && rowScale === null && columnScale === null;
+  for (let q = list.start[front.first]; q < list.start[front.first + front.own]; q++) {
+    const p = list.entry[q];
+    const r = rowPlace(run, front, rowPosition[rowIndex[p]]);
+    const c = columnPlace(run, front, columnPosition[list.column[q]]);
+    const to = c < summed ? base + c * m + r : behind + r * below + c - summed;
+    if (plain) panel[to] += values[p];
+    else addEntry(run, p, list.column[q], panel, to);
+  }
+}
+
+function rowPlace(run: FrontRun, front: Front, r: number): number {
   const place = run.localRow[r];
   if (place >= front.m || run.rowList[front.list + place] !== r) throw strange();
   return place;
 }
 
-function columnPlace(run: FrontRun, front: Front, list: EntryList, q: number): number {
-  const c = run.columnPosition[list.column[q]];
+function columnPlace(run: FrontRun, front: Front, c: number): number {
   const place = run.localColumn[c];
   if (place >= front.m || run.columnList[front.list + place] !== c) throw strange();
   return place;
@@ -95,13 +139,13 @@ function strange(): Fault {
   );
 }
 
-function addEntry(run: FrontRun, list: EntryList, q: number, x: Float64Array, to: number): void {
+/** Adds entry p, of original column j, scaled, to scalar `to` of x. */
+function addEntry(run: FrontRun, p: number, j: number, x: Float64Array, to: number): void {
   const { rowScale, columnScale } = run.options;
-  const p = list.entry[q];
   const values = run.matrix.values as Float64Array;
   let f = 1;
   if (rowScale !== null) f = rowScale[run.matrix.rowIndex[p]];
-  if (columnScale !== null) f *= columnScale[list.column[q]];
+  if (columnScale !== null) f *= columnScale[j];
   if (run.kernels.width === 1) {
     x[to] += values[p] * f;
     return;

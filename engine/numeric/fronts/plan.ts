@@ -100,12 +100,13 @@ export function predictPeakBytes(tree: AssemblyTree, question: PeakQuestion): Pe
   const packed = kind === 'cholesky' && !complex ? plan.packed : 2 * plan.packed;
   const columns = kind === 'cholesky' ? 0 : kind === 'ldlt' ? 2 : 1;
   const sides = symmetric ? 1 : 2;
-  const perColumn = 1 + (question.paired === true ? 1 : 0) + sides + 1;
+  const perColumn = 1 + (question.paired === true ? 1 : 0) + sides;
+  const lists = symmetric ? 0 : n + 1 + 2 * entries;
   const perFront = 8;
   const factors = scalar * (plan.factor + pivots);
   const stack = scalar * plan.stack;
   const workspace = scalar * (packed + columns * plan.largestFront + panelWidth + 4);
   const indices =
-    4 * (perColumn * n + 1 + sides * (plan.largestFront + plan.subscripts) + perFront * tree.count + 4 + 2 * entries);
+    4 * (perColumn * n + sides * (plan.largestFront + plan.subscripts) + perFront * tree.count + 4 + lists);
   return { factors, stack, workspace, indices, total: factors + stack + workspace + indices };
 }

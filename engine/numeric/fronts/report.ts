@@ -93,6 +93,13 @@ function see(f: Factors, facts: PivotFacts, s: number, k: number, modulus: numbe
 /** Multiplies the determinant by a factor of modulus `modulus` and the given parts. */
 function multiply(facts: PivotFacts, re: number, im: number, modulus: number): void {
   facts.logarithm += Math.log(modulus);
+  if (im === 0) {
+    if (re < 0) {
+      facts.signRe = -facts.signRe;
+      facts.signIm = -facts.signIm;
+    }
+    return;
+  }
   const a = facts.signRe;
   const b = facts.signIm;
   facts.signRe = (a * re - b * im) / modulus;
@@ -118,7 +125,7 @@ function pivotOfPanel(f: Factors, facts: PivotFacts, s: number, k: number): void
     re *= re;
     im = 0;
   }
-  const modulus = Math.hypot(re, im);
+  const modulus = im === 0 ? Math.abs(re) : Math.hypot(re, im);
   see(f, facts, s, k, modulus);
   multiply(facts, re, im, modulus);
   count(facts, re);
@@ -132,7 +139,7 @@ function pivotOfLdlt(f: Factors, facts: PivotFacts, s: number, k: number): numbe
   const re = d[w * t];
   const im = w === 2 ? d[w * t + 1] : 0;
   if (!(f.kernels.modulus(e, t) > 0)) {
-    const modulus = Math.hypot(re, im);
+    const modulus = im === 0 ? Math.abs(re) : Math.hypot(re, im);
     see(f, facts, s, k, modulus);
     multiply(facts, re, im, modulus);
     count(facts, re);

@@ -61,6 +61,8 @@ export class FactorStore {
   readonly chunks: Float64Array[] = [];
   private readonly planned: number[] = [];
   private used = 0;
+  /** scalars of the last array that were ever in use: beyond, it is zero as it was made */
+  private touched = 0;
 
   /** @param panels scalars of each panel in the order in which they will be asked for; @param width doubles a scalar */
   constructor(
@@ -90,10 +92,12 @@ export class FactorStore {
       const grown = Math.min(chunkLength / width, Math.max(1024, 8 * scalars));
       this.chunks.push(this.allocator.float64(width * Math.max(scalars, planned > 0 ? planned : grown)));
       this.used = 0;
+      this.touched = 0;
     }
     const at = this.used;
     this.used += scalars;
-    this.chunks[this.chunks.length - 1].fill(0, width * at, width * this.used);
+    if (this.touched > at) this.chunks[this.chunks.length - 1].fill(0, width * at, width * this.touched);
+    if (this.used > this.touched) this.touched = this.used;
     return at;
   }
 

@@ -64,7 +64,7 @@ export function walkFronts(run: FrontRun): void {
 }
 
 /** Makes the front's contribution block on top of its children's and puts it in their place. */
-function leaveBlock(run: FrontRun, kind: FrontKind, entries: EntryList, front: Front, done: number): void {
+function leaveBlock(run: FrontRun, kind: FrontKind, entries: EntryList | null, front: Front, done: number): void {
   const { stack } = run;
   const bottom = front.children > 0 ? run.pendingAt[run.pendingCount - front.children] : stack.top;
   const size = front.m - done;
