@@ -1,6 +1,8 @@
 import type { Pattern } from '../matrix/pattern.ts';
 import type { Progress } from '../matrix/progress.ts';
+import { withHeldLast } from '../ordering/heldLast.ts';
 import { minimumDegree } from '../ordering/minimumDegree.ts';
+import { minimumFill } from '../ordering/minimumFill.ts';
 import { natural } from '../ordering/natural.ts';
 import { nestedDissection } from '../ordering/nestedDissection.ts';
 import type { OrderingMethod, OrderingOptions, OrderingResult } from '../ordering/ordering.ts';
@@ -13,6 +15,7 @@ const methods: Partial<Record<OrderingName, OrderingMethod<OrderingOptions>>> = 
   natural,
   'reverse-cuthill-mckee': reverseCuthillMcKee,
   'minimum-degree': minimumDegree,
+  'minimum-fill': minimumFill,
   'nested-dissection': nestedDissection,
 };
 
@@ -27,6 +30,9 @@ export function runOrdering(pattern: Pattern, choice: Choice, input: TrialInput,
     seed: choice.seed,
     ...(input.heldLast === null ? {} : { heldLast: input.heldLast }),
   };
+  if (choice.ordering === 'imported' && input.imported !== null) {
+    return { order: withHeldLast(input.imported, input.heldLast ?? undefined), notes: [] };
+  }
   const method = methods[choice.ordering];
   if (method === undefined) throw new Error(`no method for ${choice.ordering}`);
   return method(pattern, options, progress);

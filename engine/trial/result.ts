@@ -1,5 +1,6 @@
 import type { NewToOld } from '../matrix/permutation.ts';
 import type { Choice } from './choice.ts';
+import type { TrialPlan } from './prepared.ts';
 
 /** Counts of one trial. What is undefined is null, with a reason in `reasons` under the same name. */
 export interface TrialCounts {
@@ -41,5 +42,7 @@ export interface TrialResult {
   /** whether the figures rest on the values (matching or scaling before ordering) and not on the pattern alone */
   readonly valueDependent: boolean;
   readonly counts: TrialCounts;
+  /** what was decided before ordering, for the numeric run */
+  readonly plan: TrialPlan;
   readonly seconds: { readonly ordering: number; readonly symbolic: number };
 }

@@ -117,7 +117,6 @@ export function defaultChoice(
 export function suitableOrderings(facts: MatrixFacts, factorization: FactorizationName): readonly OrderingName[] {
   if (facts.rows !== facts.columns) return ['natural', 'column-minimum-degree'];
   const out: OrderingName[] = ['natural', 'reverse-cuthill-mckee'];
-  if (factorization !== 'column-lu') out.push('sloan');
   out.push('minimum-degree', 'minimum-fill', 'nested-dissection');
   if (factorization === 'column-lu') out.push('column-minimum-degree');
   if (facts.hasCoordinates) out.push('geometric-dissection');

@@ -1,5 +1,7 @@
 import { Fault } from '../matrix/fault.ts';
 import { noProgress, type Progress } from '../matrix/progress.ts';
+import type { OrderingResult } from '../ordering/ordering.ts';
+import { compressPairs } from '../prepare/compressPairs.ts';
 import { analyseGraph } from '../symbolic/analyse.ts';
 import { type FactorKind, factorOperations } from '../symbolic/operations.ts';
 import { profileOf } from '../symbolic/profile.ts';
@@ -7,6 +9,7 @@ import { factorBytes, usualWidths } from './bytes.ts';
 import type { Choice } from './choice.ts';
 import type { TrialContext } from './context.ts';
 import { runOrdering, takesPostorder } from './order.ts';
+import { frontGraph, pairedPattern, planOf, type TrialPlan } from './prepared.ts';
 import type { TrialResult } from './result.ts';
 import { whyNoForecast } from './rules.ts';
 import { runColumnTrial } from './runColumn.ts';
@@ -33,8 +36,9 @@ function orderingProgress(progress: Progress): Progress {
 function runSymmetricTrial(context: TrialContext, choice: Choice, kind: FactorKind, progress: Progress): TrialResult {
   const n = context.facts.columns;
   const t0 = now();
-  const graph = context.graph();
-  const ordered = runOrdering(context.input.matrix, choice, context.input, orderingProgress(progress));
+  const { plan, valueDependent, notes } = planOf(context, choice, orderingProgress(progress));
+  const graph = frontGraph(context, plan);
+  const ordered = orderWithPairs(context, choice, plan, orderingProgress(progress));
   const t1 = now();
   const symbolic = analyseGraph(
     graph,
@@ -60,8 +64,9 @@ function runSymmetricTrial(context: TrialContext, choice: Choice, kind: FactorKi
     parent: symbolic.parent,
     columnCount: symbolic.columnCount,
     separators: ordered.separators ?? [],
-    notes: ordered.notes,
-    valueDependent: false,
+    notes: [...notes, ...ordered.notes],
+    valueDependent,
+    plan,
     counts: {
       factorEntries: lu ? 2 * lower - n : lower,
       lowerEntries: lower,
@@ -81,12 +86,21 @@ function runSymmetricTrial(context: TrialContext, choice: Choice, kind: FactorKi
   };
 }
 
+/** The ordering of a choice; where unknowns are paired, the graph of the pairs is ordered (Duff & Pralet 2005). */
+function orderWithPairs(context: TrialContext, choice: Choice, plan: TrialPlan, progress: Progress): OrderingResult {
+  const { input } = context;
+  if (plan.partner === null || input.heldLast !== null) {
+    return runOrdering(pairedPattern(input.matrix, plan.plannedRow), choice, input, progress);
+  }
+  const compressed = compressPairs(input.matrix, plan.partner);
+  const { order, notes } = runOrdering(compressed.pattern, choice, input, progress);
+  return { order: compressed.expand(order), notes };
+}
+
 /** Proven for any delayed pivots: no less than the entries of A + Aᵀ + I that stay in place, no more than dense components. */
 function denseRange(context: TrialContext, lu: boolean): readonly [number, number] {
   const graph = context.graph();
-  const { of, count } = context.components();
-  const size = new Float64Array(count);
-  for (let i = 0; i < graph.order; i++) size[of[i]]++;
+  const { size, count } = context.components();
   let high = 0;
   for (let c = 0; c < count; c++) high += lu ? size[c] * size[c] : (size[c] * (size[c] + 1)) / 2;
   const offDiagonal = graph.neighbour.length;

@@ -1,3 +1,4 @@
+import { type BlockTriangularForm, blockTriangularForm } from '../graph/blockTriangular.ts';
 import { graphOf } from '../graph/graph.ts';
 import { asNewToOld, composeOrders, type NewToOld } from '../matrix/permutation.ts';
 import type { Progress } from '../matrix/progress.ts';
@@ -12,6 +13,7 @@ import type { Choice } from './choice.ts';
 import type { TrialContext } from './context.ts';
 import { byBlock, type DiagonalBlocks, diagonalBlocks } from './diagonalBlocks.ts';
 import { runOrdering, takesPostorder } from './order.ts';
+import { plannedRowOf, planOf, type TrialPlan } from './prepared.ts';
 import type { TrialCounts, TrialResult } from './result.ts';
 
 const now = (): number => performance.now() / 1000;
@@ -24,7 +26,9 @@ export function runColumnTrial(context: TrialContext, choice: Choice, progress: 
   const square = context.facts.rows === context.facts.columns;
   const t0 = now();
   const ordering: Progress = (fraction, phase) => progress(0.6 * fraction, phase);
-  const blocks = square ? diagonalBlocks(context.input.matrix, context.blockForm(ordering), !choice.blocks) : null;
+  const { plan, valueDependent, notes } = planOf(context, choice, ordering);
+  const form = square ? blockFormOf(context, plan, ordering) : null;
+  const blocks = form === null ? null : diagonalBlocks(context.input.matrix, form, !choice.blocks);
   const pattern = blocks?.pattern ?? context.input.matrix;
   const ordered = runOrdering(pattern, choice, context.input, ordering);
   const requested = blocks === null ? ordered.order : asNewToOld(byBlock(ordered.order, blocks.blockOf, blocks.blocks));
@@ -46,11 +50,25 @@ export function runColumnTrial(context: TrialContext, choice: Choice, progress: 
     parent: bound.parent,
     columnCount: bound.lower,
     separators: blocks !== null && blocks.blocks > 1 ? [] : (ordered.separators ?? []),
-    notes: ordered.notes,
-    valueDependent: false,
+    notes: [...notes, ...ordered.notes],
+    valueDependent,
+    plan: {
+      ...plan,
+      plannedRow: form === null ? null : plannedRowOf(form),
+      blockStart: form === null || !choice.blocks ? null : form.blockStart,
+    },
     counts,
     seconds: { ordering: t1 - t0, symbolic: t2 - t1 },
   };
+}
+
+/** The block form on the planned pivots of a matching, or on any maximum matching. */
+function blockFormOf(context: TrialContext, plan: TrialPlan, progress: Progress): BlockTriangularForm {
+  if (plan.plannedRow === null) return context.blockForm(progress);
+  const n = plan.plannedRow.length;
+  const columnOf = new Int32Array(n);
+  for (let j = 0; j < n; j++) columnOf[plan.plannedRow[j]] = j;
+  return blockTriangularForm(context.input.matrix, progress, { rowOf: plan.plannedRow, columnOf, size: n });
 }
 
 function rectangularCounts(bound: RowMergeBound): TrialCounts {

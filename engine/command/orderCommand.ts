@@ -1,0 +1,30 @@
+import { type Direction, permutationFormula, writePermutation } from '../exchange/writePermutation.ts';
+import { Fault } from '../matrix/fault.ts';
+import { runTrial } from '../trial/run.ts';
+import { choiceOf, loadContext, orderingOf } from './load.ts';
+import type { Output } from './output.ts';
+import type { Call } from './parse.ts';
+
+/** `order FILE --ordering NAME --out FILE`: writes a permutation. */
+export async function orderCommand(call: Call, out: Output): Promise<number> {
+  const path = call.text('out');
+  if (path === null)
+    throw new Fault('input', 'usage', '"order" needs --out FILE, the file to write the permutation to.');
+  if (call.text('ordering') === null && call.text('permutation') === null) {
+    throw new Fault('input', 'usage', '"order" needs --ordering NAME.');
+  }
+  const { loaded, context } = await loadContext(call);
+  const trial = runTrial(context, choiceOf(call, context, orderingOf(call, 'natural')));
+  const which = call.text('which') ?? 'effective';
+  const direction = (call.text('direction') ?? 'new-to-old') as Direction;
+  const base = call.text('base') === '0' ? 0 : 1;
+  const title = `${loaded.name}, ${trial.choice.ordering} for ${trial.choice.factorization}, ${which} order`;
+  const format = (call.text('format') ?? 'plain') as 'plain' | 'matrix-market-array';
+  await out.file(
+    path,
+    writePermutation(which === 'requested' ? trial.requested : trial.effective, { direction, base, format, title }),
+  );
+  out.line(`${path}: ${title}`);
+  out.line(permutationFormula(direction, base));
+  return 0;
+}
