@@ -17,6 +17,14 @@ export const stages = {
     await page.getByRole('tab', { name: 'Comparison' }).click();
     await page.waitForTimeout(200);
   },
+  async proof(page) {
+    await stages.trials(page);
+    await page.getByRole('button', { name: /^C, / }).click();
+    await page.getByRole('tab', { name: 'Proof' }).click();
+    await page.getByRole('button', { name: 'Run the proof' }).click();
+    await page.getByText('Forecast against proof', { exact: true }).first().waitFor();
+    await page.waitForTimeout(300);
+  },
   async add(page) {
     await stages.trials(page);
     await page.getByRole('button', { name: 'Add a trial…' }).click();

@@ -1,6 +1,7 @@
 import { useStore } from 'zustand';
 import { ImportPanel } from '../intake/ImportPanel.tsx';
 import { Plates } from '../intake/Plates.tsx';
+import { ProofPanel } from '../proof/ProofPanel.tsx';
 import { currentSheet, type Sheet, sheetsStore } from '../state/sheets.ts';
 import { openPanel, type PanelName, viewStore } from '../state/view.ts';
 import { SurveyPanel } from '../survey/SurveyPanel.tsx';
@@ -11,6 +12,7 @@ import { useWide } from './useWide.ts';
 
 const panels: readonly { name: PanelName; label: string }[] = [
   { name: 'survey', label: 'Survey' },
+  { name: 'proof', label: 'Proof' },
   { name: 'import', label: 'Import' },
 ];
 const withTrials: typeof panels = [{ name: 'trials', label: 'Trials' }, ...panels];
@@ -19,6 +21,8 @@ function Panel({ name, sheet }: { name: PanelName; sheet: Sheet }) {
   switch (name) {
     case 'import':
       return <ImportPanel sheet={sheet} />;
+    case 'proof':
+      return <ProofPanel sheet={sheet} />;
     case 'trials':
       return <Ledger sheet={sheet} />;
     default:

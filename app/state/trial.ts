@@ -1,8 +1,24 @@
 import type { Choice } from '../../engine/trial/choice.ts';
+import type { Proof } from '../../engine/trial/proof.ts';
 import type { Failure } from '../workers/protocol.ts';
 import type { TrialOutcome } from '../workers/trialFigures.ts';
 
 export type TrialId = string;
+
+/** What a numeric run showed; its solutions lie in the vault. */
+export type ShownProof = Omit<Proof, 'solutions'>;
+
+/** How far the proof of a trial is. */
+export interface ProofState {
+  readonly state: 'none' | 'waiting' | 'running' | 'done' | 'stopped' | 'failed';
+  readonly fraction: number;
+  readonly phase: string;
+  readonly failure: Failure | null;
+  readonly proof: ShownProof | null;
+}
+
+/** No proof asked for. */
+export const noProof: ProofState = { state: 'none', fraction: 0, phase: '', failure: null, proof: null };
 
 /** One line of the ledger. */
 export interface Trial {
@@ -17,6 +33,7 @@ export interface Trial {
   readonly fraction: number;
   readonly phase: string;
   readonly failure: Failure | null;
+  readonly proof: ProofState;
   /** counts and seconds once finished */
   readonly outcome: TrialOutcome | null;
 }

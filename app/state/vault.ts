@@ -1,3 +1,4 @@
+import type { Proof } from '../../engine/trial/proof.ts';
 import type { TrialResult } from '../../engine/trial/result.ts';
 import { WorkerPool } from '../workers/pool.ts';
 import type { MatrixKey } from '../workers/protocol.ts';
@@ -53,7 +54,23 @@ export function resultOf(id: TrialId): TrialResult | null {
   return results.get(id) ?? null;
 }
 
+type Solutions = Proof['solutions'];
+/** Solutions of the user's right-hand sides, by trial. */
+const solved = new Map<TrialId, Solutions>();
+
+export function keepSolutions(id: TrialId, solutions: Solutions): void {
+  solved.set(id, solutions);
+}
+
+/** Solutions from the proof of a trial, or null. */
+export function solutionsOf(id: TrialId): Solutions {
+  return solved.get(id) ?? null;
+}
+
 /** Lets go of the results of trials that can no longer be called back. */
 export function dropResults(ids: readonly TrialId[]): void {
-  for (const id of ids) results.delete(id);
+  for (const id of ids) {
+    results.delete(id);
+    solved.delete(id);
+  }
 }

@@ -1,4 +1,5 @@
 import { asText, percent } from '../figures/format.ts';
+import { VerdictMark } from '../proof/Verdict.tsx';
 import type { Sheet } from '../state/sheets.ts';
 import type { Trial } from '../state/trial.ts';
 import { chooseTrial, removeTrial, startTrial, stopTrial, toggleShown } from '../state/trials.ts';
@@ -80,7 +81,10 @@ export function LedgerRow(props: RowProps) {
           aria-label={`${letter}, ${sayChoice(choice)}${chosen ? ', chosen' : ''}`}
           onClick={() => chooseTrial(sheet.id, id)}
         >
-          <span>{orderings[choice.ordering].name}</span>
+          <span>
+            {orderings[choice.ordering].name}
+            {trial.proof.proof === null ? null : <VerdictMark verdict={trial.proof.proof.card.verdict} small />}
+          </span>
           <span className="small soft">
             {sayFactorization(choice)}
             {heldLast.length === 0 ? '' : `, ${heldLast.length} held last`}

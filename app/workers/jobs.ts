@@ -1,6 +1,7 @@
 import type { Progress } from '../../engine/matrix/progress.ts';
 import { example, plates } from './exampleJobs.ts';
 import { density } from './pictureJobs.ts';
+import { prove } from './proofJobs.ts';
 import type { Answer, Ask, Early, Operation } from './protocol.ts';
 import { read } from './readJobs.ts';
 import type { Shelf } from './shelf.ts';
@@ -25,4 +26,5 @@ export const jobs: { readonly [K in Operation]: Job<K> } = {
   survey,
   density,
   trial,
+  prove,
 };

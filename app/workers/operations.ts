@@ -1,6 +1,7 @@
 import type { DensityMap } from '../../engine/picture/window.ts';
 import type { Survey } from '../../engine/survey/survey.ts';
 import type { Choice } from '../../engine/trial/choice.ts';
+import type { Proof } from '../../engine/trial/proof.ts';
 import type { TrialResult } from '../../engine/trial/result.ts';
 import type { MatrixFacts } from '../../engine/trial/rules.ts';
 import type { MatrixKey } from './protocol.ts';
@@ -57,4 +58,10 @@ export interface Operations {
   density: { ask: { key: MatrixKey; cells: number }; answer: DensityMap; early: never };
   /** one trial: ordering, analysis, forecast */
   trial: { ask: { key: MatrixKey; choice: Choice; heldLast: Int32Array }; answer: TrialAnswer; early: never };
+  /** the numeric run of a finished trial; refused if its forecast passes the memory limit (bytes) */
+  prove: {
+    ask: { key: MatrixKey; result: TrialResult; heldLast: Int32Array; refine: number; memoryLimit: number };
+    answer: Proof;
+    early: never;
+  };
 }

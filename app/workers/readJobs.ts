@@ -1,7 +1,7 @@
 import { readMatrix } from '../../engine/exchange/read.ts';
 import { applyRepair, defaultReadOptions } from '../../engine/exchange/readOptions.ts';
-import type { ByteSource } from '../../engine/exchange/source.ts';
 import { factsOf } from '../../engine/trial/facts.ts';
+import { blobFile, plainSource } from '../unpack/open.ts';
 import type { Job } from './jobs.ts';
 import { shareLoaded } from './shared.ts';
 import { summarize } from './summary.ts';
@@ -9,30 +9,12 @@ import { summarize } from './summary.ts';
 /** Least time between two reports of bytes, milliseconds. */
 const reportEvery = 60;
 
-/** A file as a source of bytes: pulled in chunks, never held whole. */
-export function fileSource(file: File): ByteSource {
-  return {
-    name: file.name,
-    size: file.size,
-    packedSize: file.size,
-    rewindable: true,
-    async *open() {
-      const reader = file.stream().getReader();
-      for (;;) {
-        const { done, value } = await reader.read();
-        if (done) return;
-        yield value;
-      }
-    },
-  };
-}
-
 export const read: Job<'read'> = async ({ key, file, repairs }, { shelf, progress, early }) => {
   const started = performance.now();
   const options = repairs.reduce(applyRepair, defaultReadOptions);
   let last = 0;
   const loaded = shareLoaded(
-    await readMatrix(fileSource(file), options, (bytesDone, bytesAll, phase) => {
+    await readMatrix(await plainSource(blobFile(file.name, file)), options, (bytesDone, bytesAll, phase) => {
       const fraction = bytesAll === null || bytesAll === 0 ? 0 : Math.min(1, bytesDone / bytesAll);
       progress(fraction, phase);
       const now = performance.now();
