@@ -1,4 +1,7 @@
+import { readFileSync } from 'node:fs';
 import { expect, test } from '@playwright/test';
+import { naiveElimination } from '../test/support/elimination.ts';
+import { readReference } from '../test/support/reference.ts';
 import { drop, figure, line, open, reference } from './support.ts';
 
 test('a stiffness matrix: drop, survey, trials with exact counts', async ({ page }) => {
@@ -22,6 +25,92 @@ test('an unsymmetric matrix is told so, with its factorization and why', async (
   await expect(page.locator('.topline')).toContainText('unsymmetric');
   await expect(page.locator('.advice')).toContainText('Advised: LU, because the matrix is not symmetric');
   await expect(line(page, 'minimum degree').locator('[data-cell]').first()).toBeVisible();
+});
+
+test('the exported permutation reproduces the forecast, and its inverse does not', async ({ page }) => {
+  await open(page);
+  await drop(page, [reference('bcsstk01.mtx')]);
+  const forecast = await figure(page, 'minimum degree', 'factor entries');
+  await page.getByRole('button', { name: /^C, minimum degree/ }).click();
+  await page.getByRole('tab', { name: 'Handover' }).click();
+  await page.getByLabel('direction').selectOption('new-to-old');
+  await page.getByLabel('first index').selectOption('1');
+  const waiting = page.waitForEvent('download');
+  await page.getByRole('button', { name: 'Save the permutation' }).click();
+  const download = await waiting;
+  expect(download.suggestedFilename()).toBe('bcsstk01-minimum-degree-effective-new-to-old-1-based.mtx');
+  const lines = readFileSync(await download.path(), 'latin1')
+    .trimEnd()
+    .split('\n');
+  expect(lines[0]).toBe('%%MatrixMarket matrix array integer general');
+  expect(lines.filter((l) => l.startsWith('%')).join('\n')).toContain('(P A P^T)(k,l) = A(p[k], p[l])');
+  const body = lines.filter((l) => !l.startsWith('%'));
+  expect(body[0]).toBe('48 1');
+  const order = body.slice(1).map((text) => Number(text) - 1);
+  const inverse = order.map((_, i) => order.indexOf(i));
+  const matrix = readReference('bcsstk01');
+  // counted by plain elimination, entry by entry
+  expect(naiveElimination(matrix, order).factorEntries).toBe(forecast);
+  expect(naiveElimination(matrix, inverse).factorEntries).not.toBe(forecast);
+});
+
+test('a proof of the stiffness matrix is green, and its peak is the forecast one', async ({ page }) => {
+  await open(page);
+  await drop(page, [reference('bcsstk01.mtx')]);
+  await expect(line(page, 'minimum degree').locator('[data-cell]').first()).toBeVisible();
+  await page.getByRole('button', { name: /^C, minimum degree/ }).click();
+  await page.getByRole('tab', { name: 'Proof' }).click();
+  await page.getByRole('button', { name: 'Run the proof' }).click();
+  const proof = page.getByRole('region', { name: 'Proof' });
+  await expect(proof).toContainText('Trust');
+  const peak = proof.getByRole('row', { name: /^peak memory/ }).getByRole('cell');
+  expect(await peak.nth(0).getAttribute('title')).toBe(await peak.nth(1).getAttribute('title'));
+  // 1-norm condition number 1.5976e6 by a general-purpose dense library (test/reference/figures.json); an estimate from below
+  const text =
+    (await proof
+      .getByRole('row', { name: /^condition estimate/ })
+      .getByRole('cell')
+      .textContent()) ?? '';
+  expect(Number(text)).toBeGreaterThan(1.5976e6 / 3);
+  expect(Number(text)).toBeLessThan(1.61e6);
+});
+
+test('three trials compared: sorted, marked, on the sheet and off', async ({ page }) => {
+  await open(page);
+  await drop(page, [reference('bcsstk01.mtx')]);
+  await expect(line(page, 'nested dissection').locator('[data-cell]').first()).toBeVisible();
+  await page.getByRole('button', { name: 'factor entries', exact: true }).click();
+  const entries = await page
+    .locator('[data-head="factor entries"]')
+    .evaluateAll((cells) =>
+      cells.map((cell) => Number((cell.getAttribute('title') ?? '').split(', ')[0].replaceAll(',', ''))),
+    );
+  expect(entries).toEqual([...entries].sort((a, b) => a - b));
+  await expect(page.locator('[data-head="factor entries"]').first()).toContainText('best');
+  const box = page.getByRole('checkbox', { name: 'A on the sheet' });
+  await box.check({ force: true });
+  await expect(page.getByRole('figure').filter({ hasText: 'natural' })).toHaveCount(1);
+  await box.uncheck({ force: true });
+  await expect(page.getByRole('figure').filter({ hasText: 'natural' })).toHaveCount(0);
+});
+
+test('a trial is added, refused as a duplicate, struck and called back', async ({ page }) => {
+  await open(page);
+  await drop(page, [reference('bcsstk01.mtx')]);
+  await expect(line(page, 'nested dissection').locator('[data-cell]').first()).toBeVisible();
+  await page.getByRole('button', { name: 'Add a trial…' }).click();
+  const dialog = page.getByRole('dialog');
+  await expect(dialog.getByText('This is trial C already.')).toBeVisible();
+  await dialog.getByRole('radio', { name: /^LDLᵀ/ }).check();
+  await dialog.getByRole('checkbox', { name: /^natural/ }).uncheck();
+  await dialog.getByRole('checkbox', { name: /^minimum degree/ }).check();
+  await dialog.getByRole('button', { name: 'Add the trial' }).click();
+  const added = page.getByRole('rowheader', { name: /minimum degree, LDLᵀ/ });
+  await expect(added).toBeVisible();
+  await page.getByRole('button', { name: 'Strike E from the ledger' }).click();
+  await expect(added).toHaveCount(0);
+  await page.getByRole('button', { name: 'Undo removing E' }).click();
+  await expect(added).toBeVisible();
 });
 
 test.describe('bad files say where, what and what to do', () => {

@@ -25,6 +25,12 @@ export const stages = {
     await page.getByText('Forecast against proof', { exact: true }).first().waitFor();
     await page.waitForTimeout(300);
   },
+  async handover(page) {
+    await stages.trials(page);
+    await page.getByRole('button', { name: /^C, / }).click();
+    await page.getByRole('tab', { name: 'Handover' }).click();
+    await page.getByText('(P A P^T)(k,l)').waitFor();
+  },
   async add(page) {
     await stages.trials(page);
     await page.getByRole('button', { name: 'Add a trial…' }).click();

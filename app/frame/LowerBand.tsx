@@ -1,4 +1,5 @@
 import { useStore } from 'zustand';
+import { HandoverPanel } from '../handover/HandoverPanel.tsx';
 import { ImportPanel } from '../intake/ImportPanel.tsx';
 import { Plates } from '../intake/Plates.tsx';
 import { ProofPanel } from '../proof/ProofPanel.tsx';
@@ -13,6 +14,7 @@ import { useWide } from './useWide.ts';
 const panels: readonly { name: PanelName; label: string }[] = [
   { name: 'survey', label: 'Survey' },
   { name: 'proof', label: 'Proof' },
+  { name: 'handover', label: 'Handover' },
   { name: 'import', label: 'Import' },
 ];
 const withTrials: typeof panels = [{ name: 'trials', label: 'Trials' }, ...panels];
@@ -21,6 +23,8 @@ function Panel({ name, sheet }: { name: PanelName; sheet: Sheet }) {
   switch (name) {
     case 'import':
       return <ImportPanel sheet={sheet} />;
+    case 'handover':
+      return <HandoverPanel sheet={sheet} />;
     case 'proof':
       return <ProofPanel sheet={sheet} />;
     case 'trials':

@@ -1,5 +1,6 @@
 import type { Progress } from '../../engine/matrix/progress.ts';
 import { example, plates } from './exampleJobs.ts';
+import { convention, permutation } from './handoverJobs.ts';
 import { density } from './pictureJobs.ts';
 import { prove } from './proofJobs.ts';
 import type { Answer, Ask, Early, Operation } from './protocol.ts';
@@ -27,4 +28,6 @@ export const jobs: { readonly [K in Operation]: Job<K> } = {
   density,
   trial,
   prove,
+  permutation,
+  convention,
 };

@@ -1,3 +1,5 @@
+import type { Direction, PermutationFormat } from '../../engine/exchange/writePermutation.ts';
+import type { NewToOld } from '../../engine/matrix/permutation.ts';
 import type { DensityMap } from '../../engine/picture/window.ts';
 import type { Survey } from '../../engine/survey/survey.ts';
 import type { Choice } from '../../engine/trial/choice.ts';
@@ -62,6 +64,14 @@ export interface Operations {
   prove: {
     ask: { key: MatrixKey; result: TrialResult; heldLast: Int32Array; refine: number; memoryLimit: number };
     answer: Proof;
+    early: never;
+  };
+  /** a permutation file */
+  permutation: { ask: { order: NewToOld; format: PermutationFormat }; answer: Uint8Array<ArrayBuffer>; early: never };
+  /** a convention in words, with the first places of an order as its example */
+  convention: {
+    ask: { order: NewToOld; direction: Direction; base: 0 | 1 };
+    answer: { formula: string; example: readonly string[]; selfInverse: boolean };
     early: never;
   };
 }
