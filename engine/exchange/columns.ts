@@ -36,7 +36,8 @@ export function compressTriplets(t: TripletStore, columns: number, merge: 'sum' 
   return sortAndMergeInPlace(pointer, rowIndex, values, width, merge);
 }
 
-function sortAndMergeInPlace(
+/** Sorts the rows of each column and merges duplicates; the arrays given are the result where nothing was merged. */
+export function sortAndMergeInPlace(
   pointer: Int32Array,
   rowIndex: Int32Array,
   values: Float64Array,
@@ -50,8 +51,15 @@ function sortAndMergeInPlace(
   let start = 0;
   for (let j = 0; j < columns; j++) {
     const end = pointer[j + 1];
-    sortColumnInPlace(rowIndex, values, width, start, end);
+    const strict = sortColumnInPlace(rowIndex, values, width, start, end);
     const from = fill;
+    if (strict && fill === start) {
+      // nothing merged so far and nothing to merge here: all is in place
+      pointer[j] = from;
+      fill = end;
+      start = end;
+      continue;
+    }
     for (let p = start; p < end; p++) {
       const i = rowIndex[p];
       if (fill > from && rowIndex[fill - 1] === i) {
@@ -82,17 +90,19 @@ function sortAndMergeInPlace(
   };
 }
 
-/** Stable sort of one column by row; nothing to do when it is in order already. */
+/** Stable sort of one column by row; nothing to do when it is in order already. True if its rows were strictly increasing. */
 function sortColumnInPlace(
   rowIndex: Int32Array,
   values: Float64Array,
   width: 0 | 1 | 2,
   start: number,
   end: number,
-): void {
-  let sorted = true;
-  for (let p = start + 1; p < end && sorted; p++) sorted = rowIndex[p] >= rowIndex[p - 1];
-  if (sorted) return;
+): boolean {
+  let p = start + 1;
+  while (p < end && rowIndex[p] > rowIndex[p - 1]) p++;
+  if (p >= end) return true;
+  while (p < end && rowIndex[p] >= rowIndex[p - 1]) p++;
+  if (p >= end) return false;
   const size = end - start;
   const perm = new Float64Array(size);
   // row and place in one number keep the sort stable: both are below 2³¹ and their product below 2⁵³ only for short columns
@@ -110,6 +120,7 @@ function sortColumnInPlace(
     rowIndex[start + k] = rows[perm[k]];
     for (let w = 0; w < width; w++) values[(start + k) * width + w] = old[perm[k] * width + w];
   }
+  return false;
 }
 
 /** How a mirror entry follows from the stored one. */

@@ -14,13 +14,15 @@ export interface CoordinateTarget {
   line: number;
   /** entries after which a line is strange whatever it says (the declared number) */
   readonly limit: number;
+  /** diagonal entries are strange: the symmetry has a rule for them */
+  readonly strictDiagonal: boolean;
   /** takes the line bytes[from … to), its line end left out; `target.line` is its number */
   strange(bytes: Uint8Array, from: number, to: number): void;
 }
 
 /** Reads the lines of bytes[start … end). */
 export function readCoordinateLines(bytes: Uint8Array, start: number, end: number, target: CoordinateTarget): void {
-  const { store, rows, columns, base, limit } = target;
+  const { store, rows, columns, base, limit, strictDiagonal } = target;
   const width = store.width;
   let p = start;
   let line = target.line;
@@ -60,6 +62,7 @@ export function readCoordinateLines(bytes: Uint8Array, start: number, end: numbe
       i -= base;
       j -= base;
       if (i < 0 || i >= rows || j < 0 || j >= columns) break plain;
+      if (strictDiagonal && i === j) break plain;
       c = p < end ? bytes[p] : 10;
       if (width > 0) {
         if (c !== 32 && c !== 9) break plain;

@@ -14,6 +14,10 @@ export let decimalEnd = 0;
 /** How often `Number()` had to decide since the module was loaded; for benchmarks and tests. */
 export let doubtful = 0;
 
+/** How many numbers fell to zero, and rose to infinity, since the module was loaded; readers take differences. */
+export let underflows = 0;
+export let overflows = 0;
+
 const exactPower = Float64Array.from({ length: 23 }, (_, e) => 10 ** e);
 const intPower = Float64Array.from({ length: 10 }, (_, e) => 10 ** e);
 /** relative bound on the error of the product below, with room to spare: a few 2⁻¹⁰⁴ */
@@ -131,5 +135,7 @@ function slow(bytes: Uint8Array, from: number, to: number, exponentLetter: numbe
   let text = '';
   for (let p = from; p < to; p++) text += p === exponentLetter ? 'e' : String.fromCharCode(bytes[p]);
   const value = Number(text);
+  if (value === 0) underflows++;
+  else if (value - value !== 0) overflows++;
   return negative ? -value : value;
 }

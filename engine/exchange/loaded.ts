@@ -1,4 +1,8 @@
+import type { Repair } from '../matrix/fault.ts';
 import type { SparseMatrix, Symmetry } from '../matrix/pattern.ts';
+
+/** Told bytes pulled, bytes to pull in all (null if unknown), and what is being done; may throw `Cancelled`. */
+export type ReadProgress = (bytes: number, total: number | null, phase: string) => void;
 
 /** One remark of the import summary: what was found or repaired. Nothing is changed without one. */
 export interface ImportNote {
@@ -6,6 +10,8 @@ export interface ImportNote {
   readonly code: string;
   /** one sentence for the user, with counts and places */
   readonly text: string;
+  /** other readings the user may choose, as words of `applyRepair` */
+  readonly offers?: readonly Repair[];
 }
 
 /** What a reader returns. */

@@ -1,6 +1,7 @@
 import { Fault, type Repair } from '../matrix/fault.ts';
 import type { Field, Symmetry } from '../matrix/pattern.ts';
 import type { ImportNote } from './loaded.ts';
+import { absurdOrder } from './sizeLimits.ts';
 
 /** The banner and size line of a Matrix Market file (Boisvert, Pozo & Remington, NISTIR 5935, 1996). */
 export interface MarketHeader {
@@ -20,7 +21,7 @@ const layouts = ['coordinate', 'array'] as const;
 const fields = ['real', 'integer', 'complex', 'pattern', 'double'] as const;
 const symmetries = ['general', 'symmetric', 'skew-symmetric', 'hermitian'] as const;
 /** largest order an index array can hold */
-const largestOrder = 2 ** 31 - 2;
+export const largestOrder = 2 ** 31 - 2;
 
 /** Takes the lines of the head one by one until the size line is read. */
 export class HeaderReader {
@@ -104,7 +105,13 @@ export class HeaderReader {
     const what = banner.layout === 'coordinate' ? 'rows, columns and entries' : 'rows and columns';
     const numbers = words.map((w) => (/^\d+$/.test(w) ? Number(w) : Number.NaN));
     if (words.length !== wanted || numbers.some(Number.isNaN)) {
-      const dataLike = words.length === 3 && /[.eEdD]/.test(words[2]) && !Number.isNaN(numbers[0]);
+      const dataLike =
+        banner.layout === 'coordinate' &&
+        !Number.isNaN(numbers[0]) &&
+        !Number.isNaN(numbers[1]) &&
+        ((words.length === 3 && /^[+-]?\.?\d/.test(words[2])) ||
+          (words.length === 2 && banner.field === 'pattern') ||
+          (words.length === 4 && banner.field === 'complex'));
       throw this.refuse(
         dataLike ? 'no-size-line' : 'bad-size-line',
         line,
@@ -120,6 +127,8 @@ export class HeaderReader {
         `${words[0]} × ${words[1]} is more than ${largestOrder} rows or columns, the most this program can index.`,
       );
     }
+    const absurd = absurdOrder(rows, columns, banner.layout === 'coordinate' ? numbers[2] : rows * columns);
+    if (absurd !== null) throw this.refuse('size-absurd', line, `${absurd}.`);
     if (banner.symmetry !== 'general' && rows !== columns) {
       throw this.refuse(
         'symmetric-not-square',

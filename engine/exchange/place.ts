@@ -49,13 +49,22 @@ function matrixOf(
   };
 }
 
-function noteDuplicates(c: Columns, merge: 'sum' | 'last', notes: ImportNote[]): void {
+/** Notes how many entries were merged, and where first. */
+export function noteDuplicates(c: Columns, merge: 'sum' | 'last', notes: ImportNote[]): void {
   if (c.duplicates === 0) return;
   const places = c.duplicatePlaces.map(([i, j]) => `(${i + 1}, ${j + 1})`).join(', ');
   const did = merge === 'sum' ? 'summed' : 'replaced by the last one';
   notes.push({
     code: merge === 'sum' ? 'duplicates-summed' : 'duplicates-last',
     text: `${c.duplicates} entries stood at a place already taken and were ${did}; first places (row, column): ${places}.`,
+    offers: merge === 'sum' ? [{ id: 'keep-last-duplicate', text: 'Keep the last of them instead' }] : [],
+  });
+}
+
+export function noteUpper(symmetry: Symmetry, notes: ImportNote[]): void {
+  notes.push({
+    code: 'upper-triangle',
+    text: `The file stores the upper triangle of a ${symmetry} matrix; it was mirrored.`,
   });
 }
 
@@ -69,10 +78,7 @@ function lowerTriangle(t: TripletStore, r: PlaceRequest, rule: MirrorRule, notes
   }
   if (above === 0) return compressTriplets(t, r.columns, r.duplicates);
   if (below === 0) {
-    notes.push({
-      code: 'upper-triangle',
-      text: `The file stores the upper triangle of a ${r.symmetry} matrix; it was mirrored.`,
-    });
+    noteUpper(r.symmetry, notes);
     mirrorInPlace(t, rule);
     return compressTriplets(t, r.columns, r.duplicates);
   }

@@ -29,6 +29,8 @@ export interface ReadOptions {
   readonly table: 'refuse' | 'node-dof';
   /** complex values whose imaginary parts are all zero */
   readonly imaginary: 'keep' | 'drop-zero';
+  /** plain coordinate text holds all entries, or one triangle of a symmetric matrix */
+  readonly storage: 'general' | 'symmetric';
 }
 
 export const defaultReadOptions: ReadOptions = {
@@ -44,6 +46,7 @@ export const defaultReadOptions: ReadOptions = {
   arrayBy: 'columns',
   table: 'refuse',
   imaginary: 'keep',
+  storage: 'general',
 };
 
 /** repair id -> the settings it stands for */
@@ -55,6 +58,8 @@ const repairSettings: Readonly<Record<string, Partial<ReadOptions>>> = {
   'drop-zeros': { zeros: 'drop' },
   'read-as-coordinate-text': { banner: 'none' },
   'infer-size': { banner: 'none' },
+  'read-as-symmetric-text': { banner: 'none', storage: 'symmetric' },
+  'read-as-1-based': { base: 1 },
   'read-as-hermitian': { mirror: 'hermitian' },
   'read-as-symmetric': { mirror: 'symmetric' },
   'read-as-real': { field: 'real' },
@@ -70,9 +75,15 @@ export const repairIds: readonly string[] = Object.keys(repairSettings);
 
 /** The options with one repair applied. @throws Fault for an unknown word. */
 export function applyRepair(options: ReadOptions, id: string): ReadOptions {
-  const change = repairSettings[id];
+  const below = /^drop-below=(\d*\.?\d+(?:e[+-]?\d+)?)$/i.exec(id);
+  if (below !== null) return { ...options, zeros: 'drop', dropBelow: Number(below[1]) };
+  const change = Object.hasOwn(repairSettings, id) ? repairSettings[id] : undefined;
   if (change === undefined) {
-    throw new Fault('input', 'unknown-repair', `Unknown way of reading "${id}"; known: ${repairIds.join(', ')}.`);
+    throw new Fault(
+      'input',
+      'unknown-repair',
+      `Unknown way of reading "${id}"; known: ${repairIds.join(', ')}, drop-below=NUMBER.`,
+    );
   }
   return { ...options, ...change };
 }
