@@ -6,6 +6,7 @@ import { currentSheet, sheetsStore } from '../state/sheets.ts';
 import { pool } from '../state/vault.ts';
 import { LowerBand } from './LowerBand.tsx';
 import { Notices } from './Notices.tsx';
+import { QuestionDialog } from './QuestionDialog.tsx';
 import { SheetBand } from './SheetBand.tsx';
 import { TopLine } from './TopLine.tsx';
 
@@ -29,6 +30,7 @@ export function App() {
         <LowerBand />
       </div>
       <Notices />
+      <QuestionDialog />
     </DropTarget>
   );
 }

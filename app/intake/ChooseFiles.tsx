@@ -16,7 +16,7 @@ export function ChooseFiles({ label, lead = false }: { label: string; lead?: boo
         hidden
         aria-label="Files to read"
         onChange={(event) => {
-          receive([...(event.target.files ?? [])]);
+          void receive([...(event.target.files ?? [])]);
           event.target.value = '';
         }}
       />

@@ -25,7 +25,7 @@ export function DropTarget({ children }: { children: ReactNode }) {
       setOver(false);
       if (!carriesFiles(event)) return;
       event.preventDefault();
-      receive([...(event.dataTransfer?.files ?? [])]);
+      void receive([...(event.dataTransfer?.files ?? [])]);
     };
     window.addEventListener('dragenter', enter);
     window.addEventListener('dragleave', leave);

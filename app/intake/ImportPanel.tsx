@@ -1,5 +1,6 @@
 import { asText, bytes, exactly, seconds } from '../figures/format.ts';
 import type { Sheet } from '../state/sheets.ts';
+import { ChooseFiles } from './ChooseFiles.tsx';
 
 /** What the file held and what was made of it; nothing is changed without a line here. */
 export function ImportPanel({ sheet }: { sheet: Sheet }) {
@@ -31,6 +32,19 @@ export function ImportPanel({ sheet }: { sheet: Sheet }) {
           ))}
         </tbody>
       </table>
+      {sheet.beside.length === 0 ? null : (
+        <>
+          <h3>Beside the matrix</h3>
+          <ul className="notes">
+            {sheet.beside.map((text) => (
+              <li key={text}>{text}</li>
+            ))}
+          </ul>
+        </>
+      )}
+      <p>
+        <ChooseFiles label="Add a permutation, right-hand side, labels or coordinates…" />
+      </p>
       <h3>Notes of the reader</h3>
       {summary.notes.length === 0 ? (
         <p className="soft">None: the file was read as it stands.</p>

@@ -1,6 +1,15 @@
-import { changeSheet, freshSheet, layOut, type SheetId, sheetById } from '../state/sheets.ts';
+import {
+  changeSheet,
+  currentSheet,
+  freshSheet,
+  layOut,
+  type SheetId,
+  sheetById,
+  sheetsStore,
+} from '../state/sheets.ts';
 import { follow } from '../state/tasks.ts';
 import { newMatrixKey, pool } from '../state/vault.ts';
+import { attach, roleOf } from './attach.ts';
 import { settle } from './settle.ts';
 
 /** Where the matrix of a sheet came from, so that it can be read again in another way. */
@@ -12,13 +21,61 @@ interface Origin {
 
 const origins = new Map<SheetId, Origin>();
 
-/** Takes in files that were dropped or chosen together. */
-export function receive(files: readonly File[]): void {
-  for (const file of files) {
-    const key = newMatrixKey();
-    layOut(freshSheet(key, file.name, 'opening', file.size));
-    startReading(key, { file, repairs: [] });
+/** Takes in files that were dropped or chosen together: matrices are laid out, everything else is put beside its matrix. */
+export async function receive(files: readonly File[]): Promise<void> {
+  if (files.length === 1 && currentReady() === null) {
+    layOutFile(files[0]);
+    return;
   }
+  const seen = await Promise.all(
+    files.map(async (file) => {
+      const reply = await pool.run('inspect', { file }, { lane: 'quick' }).reply;
+      return { file, role: reply.ok ? reply.value.role : 'unknown' };
+    }),
+  );
+  const matrices = seen.filter(({ role }) => role === 'matrix' || role === 'archive');
+  const companions = seen.filter((s) => !matrices.includes(s));
+  const laidOut = matrices.map(({ file }) => layOutFile(file));
+  const host = laidOut.length === 0 ? currentReady() : laidOut[0];
+  if (host === null) {
+    // nothing to belong to: read as matrices, so that the reader says what they are
+    for (const { file } of companions) layOutFile(file);
+    return;
+  }
+  if (!(await whenReady(host))) return;
+  for (const { file, role } of companions) {
+    const use = await roleOf(file, role, sheetById(host)?.name ?? 'the matrix');
+    if (use !== null) await attach(host, file, use);
+  }
+}
+
+/** The sheet in front if its matrix is there. */
+function currentReady(): SheetId | null {
+  const sheet = currentSheet(sheetsStore.getState());
+  return sheet?.phase === 'ready' ? sheet.id : null;
+}
+
+/** Waits until a sheet has its matrix; false if it never gets one. */
+function whenReady(id: SheetId): Promise<boolean> {
+  return new Promise((resolve) => {
+    const look = (): boolean => {
+      const phase = sheetById(id)?.phase;
+      if (phase === 'reading') return false;
+      resolve(phase === 'ready');
+      return true;
+    };
+    if (look()) return;
+    const leave = sheetsStore.subscribe(() => {
+      if (look()) leave();
+    });
+  });
+}
+
+function layOutFile(file: File): SheetId {
+  const key = newMatrixKey();
+  layOut(freshSheet(key, file.name, 'opening', file.size));
+  startReading(key, { file, repairs: [] });
+  return key;
 }
 
 /** Reads the file of a sheet again, with one more repair if one is given. */

@@ -39,6 +39,8 @@ export interface Sheet {
   readonly facts: MatrixFacts | null;
   readonly survey: SurveyState;
   readonly matrix: MatrixKey;
+  /** what came beside the matrix, in words */
+  readonly beside: readonly string[];
   /** stamps given away so far */
   readonly stamps: number;
   readonly trials: readonly Trial[];
@@ -84,6 +86,7 @@ export function freshSheet(id: SheetId, name: string, phase: string, bytesAll: n
     facts: null,
     survey: { state: 'waiting', fraction: 0, phase: '', failure: null, facts: {} },
     matrix: id,
+    beside: [],
     stamps: 0,
     trials: [],
     shown: [],

@@ -1,4 +1,5 @@
 import type { Progress } from '../../engine/matrix/progress.ts';
+import { attach, inspect } from './attachJobs.ts';
 import { example, plates } from './exampleJobs.ts';
 import { convention, permutation } from './handoverJobs.ts';
 import { density } from './pictureJobs.ts';
@@ -23,6 +24,8 @@ export type Job<K extends Operation> = (ask: Ask<K>, means: Means<Early<K>>) => 
 export const jobs: { readonly [K in Operation]: Job<K> } = {
   plates,
   read,
+  inspect,
+  attach,
   example,
   survey,
   density,

@@ -1,3 +1,4 @@
+import type { Recognised } from '../../engine/exchange/recognise.ts';
 import type { Direction, PermutationFormat } from '../../engine/exchange/writePermutation.ts';
 import type { NewToOld } from '../../engine/matrix/permutation.ts';
 import type { DensityMap } from '../../engine/picture/window.ts';
@@ -42,6 +43,14 @@ export interface TrialAnswer {
   readonly result: TrialResult;
 }
 
+/** What a file beside a matrix can be used as. */
+export type CompanionRole = 'permutation' | 'right-hand side' | 'labels' | 'coordinates';
+
+/** A companion file is read and beside its matrix, or the user must say which way a permutation reads. */
+export type Attached =
+  | { readonly kind: 'attached'; readonly change: Partial<Stock>; readonly facts: MatrixFacts; readonly says: string }
+  | { readonly kind: 'which-direction'; readonly factorEntries: Readonly<Record<Direction, number | null>> };
+
 /** Every operation of a worker: what it asks, what it answers, what it can say early. */
 export interface Operations {
   /** the worked examples, drawn from their smallest size */
@@ -51,6 +60,14 @@ export interface Operations {
     ask: { key: MatrixKey; file: File; repairs: readonly string[] };
     answer: Arrival;
     early: { bytesDone: number; bytesAll: number | null };
+  };
+  /** what a file looks like by its first bytes */
+  inspect: { ask: { file: File }; answer: Recognised; early: never };
+  /** a file that belongs to a matrix: a permutation, right-hand sides, labels or coordinates */
+  attach: {
+    ask: { key: MatrixKey; file: File; role: CompanionRole; direction: Direction | null };
+    answer: Attached;
+    early: never;
   };
   /** a worked example made on the spot */
   example: { ask: { key: MatrixKey; id: string; size: number }; answer: Arrival; early: never };
