@@ -1,0 +1,38 @@
+import type { FactorKind } from '../symbolic/operations.ts';
+import type { AssemblyTree } from '../symbolic/types.ts';
+import { frontOperations } from './frontWork.ts';
+
+/** What a factorization costs when a share of the pivots is handed up once. Modelled. */
+export interface DelayedRow {
+  /** share of the pivots of each front that fail there */
+  readonly share: number;
+  readonly storedFactorEntries: number;
+  readonly operations: number;
+}
+
+/**
+ * Modelled growth when in every front that has a parent the given share of its pivots (rounded up from one half) is delayed to it: the
+ * parent's front grows by that many rows and pivots. Roots take what comes.
+ */
+export function delayedGrowth(
+  kind: FactorKind,
+  tree: AssemblyTree,
+  shares: readonly number[] = [0, 0.01, 0.05, 0.2],
+): readonly DelayedRow[] {
+  return shares.map((share) => {
+    const extra = new Int32Array(tree.count);
+    let stored = 0;
+    let operations = 0;
+    for (let s = 0; s < tree.count; s++) {
+      const planned = tree.firstColumn[s + 1] - tree.firstColumn[s] + extra[s];
+      const m = tree.frontOrder[s] + extra[s];
+      const handed = tree.parent[s] < 0 ? 0 : Math.round(share * planned);
+      const p = planned - handed;
+      if (tree.parent[s] >= 0) extra[tree.parent[s]] += handed;
+      const half = p * m - (p * (p - 1)) / 2;
+      stored += kind === 'lu' ? 2 * half - p : half;
+      operations += frontOperations(kind, m, p);
+    }
+    return { share, storedFactorEntries: stored, operations };
+  });
+}
