@@ -1,4 +1,3 @@
-import { Random } from '../../matrix/random.ts';
 import type { WeightedGraph } from './weightedGraph.ts';
 
 /**
@@ -13,11 +12,14 @@ const HEAVIEST_PAIR = 1.5;
 /** Two-hop pairs are looked for when more than this share of the vertices stays alone. */
 const LONELY_SHARE = 0.1;
 
+/** Vertices are visited at most so many places before or behind their own, mostly. */
+const SHUFFLE_REACH = 128;
+
 /**
  * Fills `match` (vertex -> partner, itself when alone) and `coarseOf` (vertex -> coarse vertex), both of length order.
- * `targetOrder`: order of the coarsest graph wanted; `salt`: any integer, decides between equal edges and the place
- * where the walk over the vertices starts. Returns the number of coarse vertices; pairs are numbered along the walk,
- * which keeps near vertices near.
+ * `targetOrder`: order of the coarsest graph wanted; `salt`: any integer, decides between equal edges and the order
+ * in which vertices choose. Returns the number of coarse vertices; they are numbered like their first members, which
+ * keeps near vertices near. `coarseOf` serves as workspace on the way.
  */
 export function matchInto(
   g: WeightedGraph,
@@ -29,7 +31,7 @@ export function matchInto(
   const n = g.order;
   const heaviest = Math.max(2, Math.floor((HEAVIEST_PAIR * g.totalWeight) / targetOrder));
   match.fill(-1);
-  const lonely = matchHeavyEdges(g, match, heaviest, salt);
+  const lonely = matchHeavyEdges(g, match, coarseOf, heaviest, salt);
   if (lonely > LONELY_SHARE * n) matchTwoHops(g, match, heaviest);
   let coarse = 0;
   for (let v = 0; v < n; v++) {
@@ -40,13 +42,28 @@ export function matchInto(
   return coarse;
 }
 
-function matchHeavyEdges(g: WeightedGraph, match: Int32Array, heaviest: number, salt: number): number {
+function matchHeavyEdges(
+  g: WeightedGraph,
+  match: Int32Array,
+  walk: Int32Array,
+  heaviest: number,
+  salt: number,
+): number {
   const { order: n, pointer, neighbour, edgeWeight, weight } = g;
   let lonely = 0;
   let chance = salt | 1;
-  const walk = new Int32Array(n);
+  // a shuffle in which vertices stay within reach of their place: chance enough, and near in memory
   for (let k = 0; k < n; k++) walk[k] = k;
-  new Random(salt).shuffleInPlace(walk);
+  for (let k = 0; k < n; k++) {
+    chance ^= chance << 13;
+    chance ^= chance >>> 17;
+    chance ^= chance << 5;
+    const room = n - k < SHUFFLE_REACH ? n - k : SHUFFLE_REACH;
+    const other = k + Math.floor((chance >>> 8) * (room / 16777216));
+    const v = walk[other];
+    walk[other] = walk[k];
+    walk[k] = v;
+  }
   for (let k = 0; k < n; k++) {
     const v = walk[k];
     if (match[v] >= 0) continue;

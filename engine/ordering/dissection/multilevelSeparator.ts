@@ -4,6 +4,7 @@ import { contract } from './contract.ts';
 import { grow } from './grow.ts';
 import { growByDistance } from './growByDistance.ts';
 import { matchInto } from './matching.ts';
+import { improveByMatching } from './matchingImprovement.ts';
 import { refine } from './refine.ts';
 import { SEPARATOR, type SeparationWorkspace } from './separation.ts';
 import type { WeightedGraph } from './weightedGraph.ts';
@@ -50,19 +51,18 @@ export function findSeparator(
   const { arena, workspace: w } = tools;
   const n = g.order;
   const mark = arena.mark();
-  const { runs } = settings;
-  const parts = arena.take(runs * n);
-  const costs = new Float64Array(runs);
-  descend(g, parts, costs, settings, tools);
-  let best = 0;
-  for (let r = 1; r < runs; r++) if (costs[r] < costs[best]) best = r;
+  const carried = carriedAt(n, n, settings.runs);
+  const parts = arena.take(carried * n);
+  const costs = new Float64Array(carried);
+  descend(g, parts, costs, n, settings, tools);
+  const best = cheapest(costs);
   let cost = costs[best];
   part.set(parts.subarray(best * n, best * n + n));
   const trial = parts.subarray(0, n);
-  for (let end = 0; end < 2; end++) {
+  for (let end = 0; end < ENDS; end++) {
     const start = growByDistance(g, trial, w, end === 0 ? n - 1 : 0, settings.balance);
-    if (start > 3 * cost) continue;
-    const reached = refine(g, trial, w, settings.balance, passesFor(g), patienceFor(w.count));
+    if (start > HOPELESS * cost) continue;
+    const reached = improve(g, trial, settings, tools);
     if (reached < cost) {
       cost = reached;
       part.set(trial);
@@ -73,11 +73,44 @@ export function findSeparator(
   return cost;
 }
 
+/** Level structures tried on the finest level: from its last and its first vertex, which the numbering puts far apart. */
+const ENDS = 2;
+/** A level structure is not improved when it starts at more than so many times the best cost. */
+const HOPELESS = 1.5;
+
+/** Separators carried on a level of `order` vertices when the finest has `finest`: fewer where levels are dear. */
+function carriedAt(order: number, finest: number, runs: number): number {
+  if (2.5 * order > finest) return 1;
+  if (6 * order > finest) return Math.min(2, runs);
+  return runs;
+}
+
+/** Passes, a matching, and passes again when the matching found something. */
+function improve(g: WeightedGraph, part: Int32Array, settings: SeparatorSettings, tools: SeparatorTools): number {
+  const { workspace: w, arena } = tools;
+  const cost = refine(g, part, w, settings.balance, PASSES, patienceFor(w.count));
+  const matched = improveByMatching(g, part, w, settings.balance, arena);
+  return matched < cost ? refine(g, part, w, settings.balance, PASSES, patienceFor(w.count)) : cost;
+}
+/** Matchings pay where the finest graph has fewer than so many times the vertices. */
+const MATCHED_LEVELS = 6;
+
+/** Most passes of a refinement. */
+const PASSES = 8;
+
+/** The place of the least cost. */
+function cheapest(costs: Float64Array): number {
+  let best = 0;
+  for (let r = 1; r < costs.length; r++) if (costs[r] < costs[best]) best = r;
+  return best;
+}
+
 /** Fills one part array after another, each of length g.order, and their costs. */
 function descend(
   g: WeightedGraph,
   parts: Int32Array,
   costs: Float64Array,
+  finest: number,
   settings: SeparatorSettings,
   tools: SeparatorTools,
 ): void {
@@ -100,12 +133,19 @@ function descend(
     }
   } else {
     const coarse = contract(g, match, coarseOf, coarseOrder, w.scratch, arena);
-    const coarseParts = arena.take(runs * coarseOrder);
-    descend(coarse, coarseParts, costs, settings, tools);
+    const carried = carriedAt(coarseOrder, finest, settings.runs);
+    const coarseParts = arena.take(carried * coarseOrder);
+    const coarseCosts = new Float64Array(carried);
+    descend(coarse, coarseParts, coarseCosts, finest, settings, tools);
     for (let r = 0; r < runs; r++) {
+      const from = cheapest(coarseCosts);
+      coarseCosts[from] = Infinity;
       const part = parts.subarray(r * n, r * n + n);
-      project(g, part, coarseOf, coarseParts, r * coarseOrder, w);
-      costs[r] = refine(g, part, w, settings.balance, passesFor(g), patienceFor(w.count));
+      project(g, part, coarseOf, coarseParts, from * coarseOrder, w);
+      costs[r] =
+        MATCHED_LEVELS * n > finest
+          ? improve(g, part, settings, tools)
+          : refine(g, part, w, settings.balance, PASSES, patienceFor(w.count));
     }
   }
   arena.release(mark);
@@ -139,12 +179,8 @@ function project(
   sizes[2] = separator;
 }
 
-function passesFor(g: WeightedGraph): number {
-  return g.order > 100000 ? 6 : 8;
-}
-
 function patienceFor(separator: number): number {
-  return Math.max(25, Math.min(300, separator));
+  return Math.max(12, Math.min(300, separator >> 1));
 }
 
 /** Growing from several seeds, each improved; the best is kept. Every other seed is a vertex far from a random one. */
