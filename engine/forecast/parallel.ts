@@ -75,20 +75,71 @@ export function parallelProfile(tree: AssemblyTree, work: Float64Array, counts =
     divisibleFrontsSpeedup: Math.max(ratio(divisible), ratio(sequential)),
     largestFronts: largestOf(tree, work, total),
     leaves,
-    rows: counts.map((p) => rowFor(tree, work, total, sequential, p)),
+    rows: scheduleRows(tree, work, total, counts),
   };
 }
 
-function largestOf(tree: AssemblyTree, work: Float64Array, total: number): ParallelProfile['largestFronts'] {
-  const most = Int32Array.from({ length: tree.count }, (_, s) => s).sort((a, b) => work[b] - work[a] || a - b);
-  return Array.from(most.subarray(0, 10), (s) => ({
-    supernode: s,
-    order: tree.frontOrder[s],
-    share: total > 0 ? work[s] / total : 0,
-  }));
+/** Subtrees of less than this share of the work are scheduled as one task each (Geist & Ng 1989). */
+const grain = 1 / 20_000;
+
+function scheduleRows(tree: AssemblyTree, work: Float64Array, total: number, counts: readonly number[]): WorkersRow[] {
+  const coarse = coarseTree(tree, work, grain * total);
+  const path = waysToRoot(coarse.tree.parent, coarse.work).reduce((a, b) => Math.max(a, b), 0);
+  return counts.map((p) => rowFor(coarse.tree, coarse.work, total, path, p));
 }
 
-function rowFor(tree: AssemblyTree, work: Float64Array, total: number, path: number, p: number): WorkersRow {
+/** The part of a tree that is scheduled. */
+type TaskTree = Pick<AssemblyTree, 'count' | 'parent' | 'frontOrder' | 'firstColumn'>;
+
+/** Joins every subtree of little work into its root; the largest front of a joined subtree stands for its memory. */
+function coarseTree(tree: AssemblyTree, work: Float64Array, least: number): { tree: TaskTree; work: Float64Array } {
+  const { count, parent } = tree;
+  const below = Float64Array.from(work);
+  const order = Int32Array.from(tree.frontOrder);
+  for (let s = 0; s < count; s++) {
+    const up = parent[s];
+    if (up < 0) continue;
+    below[up] += below[s];
+    if (below[s] < least && order[s] > order[up] && below[up] < least) order[up] = order[s];
+  }
+  const number = new Int32Array(count).fill(-1);
+  let kept = 0;
+  for (let s = 0; s < count; s++) {
+    const up = parent[s];
+    if (below[s] >= least || up < 0 || below[up] >= least) number[s] = kept++;
+  }
+  const out = {
+    count: kept,
+    parent: new Int32Array(kept),
+    frontOrder: new Int32Array(kept),
+    firstColumn: new Int32Array(kept + 1),
+  };
+  const joined = new Float64Array(kept);
+  for (let s = 0; s < count; s++) {
+    const k = number[s];
+    if (k < 0) continue;
+    out.parent[k] = parent[s] < 0 ? -1 : number[parent[s]];
+    out.frontOrder[k] = order[s];
+    // only differences are used: pivots of the joined root
+    out.firstColumn[k + 1] = out.firstColumn[k] + tree.firstColumn[s + 1] - tree.firstColumn[s];
+    joined[k] = below[s] < least ? below[s] : work[s];
+  }
+  return { tree: out, work: joined };
+}
+
+function largestOf(tree: AssemblyTree, work: Float64Array, total: number): ParallelProfile['largestFronts'] {
+  const most: number[] = [];
+  for (let s = 0; s < tree.count; s++) {
+    if (most.length === 10 && work[s] <= work[most[9]]) continue;
+    let k = most.length;
+    while (k > 0 && work[s] > work[most[k - 1]]) k--;
+    most.splice(k, 0, s);
+    if (most.length > 10) most.pop();
+  }
+  return most.map((s) => ({ supernode: s, order: tree.frontOrder[s], share: total > 0 ? work[s] / total : 0 }));
+}
+
+function rowFor(tree: TaskTree, work: Float64Array, total: number, path: number, p: number): WorkersRow {
   const whole = listSchedule(tree, work, p);
   // fronts near the root whose work is more than a worker's fair share are divided: all workers take part in each
   const divided = new Float64Array(tree.count);
@@ -109,7 +160,7 @@ function rowFor(tree: AssemblyTree, work: Float64Array, total: number, path: num
   };
 }
 
-function splits(tree: AssemblyTree, work: Float64Array, total: number, s: number, p: number): boolean {
+function splits(tree: TaskTree, work: Float64Array, total: number, s: number, p: number): boolean {
   return p > 1 && tree.frontOrder[s] >= 4 * p && work[s] > total / (4 * p);
 }
 
@@ -118,7 +169,7 @@ function splits(tree: AssemblyTree, work: Float64Array, total: number, s: number
  * occupies every worker and waits for them.
  */
 export function listSchedule(
-  tree: Pick<AssemblyTree, 'count' | 'parent' | 'frontOrder' | 'firstColumn'>,
+  tree: TaskTree,
   work: Float64Array,
   workers: number,
   takesAll: (s: number) => boolean = () => false,

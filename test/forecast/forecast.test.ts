@@ -9,7 +9,7 @@ import { storageOf } from '../../engine/forecast/storage.ts';
 import { defaultTarget } from '../../engine/forecast/target.ts';
 import { calibrate, rateAt } from '../../engine/forecast/time.ts';
 import { compareWorkload, workloadSeconds } from '../../engine/forecast/workload.ts';
-import { asNewToOld, identityOrder } from '../../engine/matrix/permutation.ts';
+import { identityOrder } from '../../engine/matrix/permutation.ts';
 import { noProgress } from '../../engine/matrix/progress.ts';
 import { planFronts } from '../../engine/numeric/fronts/plan.ts';
 import { nestedDissection } from '../../engine/ordering/nestedDissection.ts';
