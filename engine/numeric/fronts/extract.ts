@@ -2,6 +2,7 @@ import { assemble } from '../../matrix/assemble.ts';
 import type { SparseMatrix } from '../../matrix/pattern.ts';
 import { asNewToOld, type NewToOld } from '../../matrix/permutation.ts';
 import type { Factors } from './factors.ts';
+import type { FactorArray } from './storage.ts';
 
 /**
  * Factors as sparse matrices, in the order of elimination: S·A·S permuted by `rowOrder` = L·Lᴴ or L·D·Lᵀ (`upper` null), or
@@ -30,7 +31,7 @@ class Entries {
   ) {}
 
   /** Adds scalar `at` of x; zeros off the diagonal are padding and stay out. */
-  add(i: number, j: number, x: Float64Array, at: number, negateImaginary = false): void {
+  add(i: number, j: number, x: FactorArray, at: number, negateImaginary = false): void {
     const w = this.width;
     if (i !== j && x[w * at] === 0 && (w === 1 || x[2 * at + 1] === 0)) return;
     this.row.push(i);

@@ -1,7 +1,9 @@
 import type { NewToOld } from '../../matrix/permutation.ts';
 import type { DenseKernels } from '../dense/kernels.ts';
 import type { SettledOptions } from './options.ts';
+import { panelSize } from './plan.ts';
 import type { FrontRun } from './run.ts';
+import type { FactorArray } from './storage.ts';
 
 /**
  * Factors as a run leaves them: panels in a few large arrays. Symmetric panel: lower trapezoid, ld = m. LU panel: m × p rectangle
@@ -23,7 +25,7 @@ export interface Factors {
   readonly eliminated: Int32Array;
   /** front -> number of its first pivot in the order of elimination; length count + 1; the last is the number of pivots */
   readonly pivotStart: Int32Array;
-  readonly chunks: readonly Float64Array[];
+  readonly chunks: readonly FactorArray[];
   readonly chunkOf: Int32Array;
   readonly panelAt: Int32Array;
   readonly diagonal: Float64Array;
@@ -59,4 +61,37 @@ export function factorsOf(run: FrontRun): Factors {
     subdiagonal: run.subdiagonal,
     largestFront,
   };
+}
+
+/** A panel as the kernels read it. */
+export interface PanelView {
+  x: Float64Array;
+  /** first scalar */
+  base: number;
+}
+
+/** Scalars of the panel of front s. */
+export function panelLength(f: Factors, s: number): number {
+  return panelSize(f.options.kind !== 'lu', f.listStart[s + 1] - f.listStart[s], f.eliminated[s]);
+}
+
+/** Doubles that `openPanel` needs as scratch: none unless factors are stored in single precision. */
+export function scratchLength(f: Factors): number {
+  let most = 0;
+  if (f.options.single) for (let s = 0; s < f.count; s++) most = Math.max(most, panelLength(f, s));
+  return f.kernels.width * most;
+}
+
+/** Points `view` at the panel of front s: where it lies, or as doubles in `scratch`. */
+export function openPanel(f: Factors, s: number, view: PanelView, scratch: Float64Array): void {
+  const array = f.chunks[f.chunkOf[s]];
+  if (array instanceof Float64Array) {
+    view.x = array;
+    view.base = f.panelAt[s];
+    return;
+  }
+  const w = f.kernels.width;
+  scratch.set(array.subarray(w * f.panelAt[s], w * (f.panelAt[s] + panelLength(f, s))));
+  view.x = scratch;
+  view.base = 0;
 }

@@ -11,6 +11,7 @@ import { reportOf } from './report.ts';
 import { FrontRun } from './run.ts';
 import { type SchurComplement, schurOf } from './schur.ts';
 import { solveFronts } from './solve.ts';
+import type { FactorArray } from './storage.ts';
 import { walkFronts } from './walk.ts';
 
 /**
@@ -21,8 +22,7 @@ export class FrontFactor implements Solver {
   readonly size: number;
   readonly complex: boolean;
   readonly report: PivotReport;
-  /** panels, subscripts and pivots, for extraction and export */
-  readonly factors: Factors;
+  private held: Factors | null;
   /** Schur complement onto the unknowns that were not eliminated; null unless unknowns were held */
   readonly schur: SchurComplement | null;
 
@@ -34,9 +34,23 @@ export class FrontFactor implements Solver {
   ) {
     this.size = tree.size;
     this.complex = run.kernels.width === 2;
-    this.factors = factorsOf(run);
+    const factors = factorsOf(run);
+    this.held = factors;
     this.schur = run.options.schur > 0 ? schurOf(run) : null;
-    this.report = reportOf(run, this.factors);
+    this.report = reportOf(run, factors);
+  }
+
+  /** Panels, subscripts and pivots, for extraction and export. @throws Fault where a refactorization has taken them over. */
+  get factors(): Factors {
+    if (this.held !== null) return this.held;
+    throw new Fault('input', 'factors-taken-over', 'These factors were overwritten by a factorization of new values.');
+  }
+
+  /** Gives up the arrays of the factors, to be overwritten. */
+  takeArrays(): FactorArray[] {
+    const arrays = [...this.factors.chunks];
+    this.held = null;
+    return arrays;
   }
 
   solveInPlace(x: Float64Array, columns: number): void {
@@ -81,6 +95,32 @@ export function factorizeFronts(
   options: FrontOptions,
   progress: Progress = noProgress,
 ): FrontFactor {
+  return factorizeInto(matrix, tree, rows, options, progress, () => []);
+}
+
+/**
+ * New values on the same pattern: the same analysis and options, pivots chosen anew where the rule allows a choice.
+ * @param overwrite whether the arrays of `factor` may be taken over, so that both never exist at once; it cannot solve afterwards,
+ *   also where the new factorization fails.
+ */
+export function refactorizeFronts(
+  factor: FrontFactor,
+  matrix: SparseMatrix,
+  progress: Progress = noProgress,
+  overwrite = false,
+): FrontFactor {
+  const { tree, rows, options } = factor;
+  return factorizeInto(matrix, tree, rows, options, progress, () => (overwrite ? factor.takeArrays() : []));
+}
+
+function factorizeInto(
+  matrix: SparseMatrix,
+  tree: AssemblyTree,
+  rows: FrontRows,
+  options: FrontOptions,
+  progress: Progress,
+  recycled: () => FactorArray[],
+): FrontFactor {
   if (matrix.rows !== matrix.columns || matrix.rows !== tree.size) {
     throw new Fault(
       'input',
@@ -94,19 +134,11 @@ export function factorizeFronts(
   const complex = matrix.field === 'complex';
   const settled = settleOptions(options, matrix.rows, complex);
   progress(0, 'factorizing');
-  const run = new FrontRun(matrix, tree, rows, settled, complex ? complexKernels : realKernels, progress);
+  const kernels = complex ? complexKernels : realKernels;
+  const run = new FrontRun(matrix, tree, rows, settled, kernels, progress, recycled());
   walkFronts(run);
   if (settled.schur === 0) refuseLeftovers(run);
   return new FrontFactor(tree, rows, options, run);
-}
-
-/** New values on the same pattern: the same analysis and options, pivots chosen anew where the rule allows a choice. */
-export function refactorizeFronts(
-  factor: FrontFactor,
-  matrix: SparseMatrix,
-  progress: Progress = noProgress,
-): FrontFactor {
-  return factorizeFronts(matrix, factor.tree, factor.rows, factor.options, progress);
 }
 
 /** Unknowns that no front could eliminate: the matrix is singular, or not finite. */

@@ -12,6 +12,11 @@ export interface FrontOptions {
   readonly threshold?: number;
   /** static pivoting: a pivot smaller than this · max|R·A·C| is replaced by that modulus (Li & Demmel 1998). Default √ε */
   readonly perturbation?: number;
+  /**
+   * `single`: factors are rounded to single precision when they are stored, half the memory; the arithmetic of the factorization and
+   * of the solves stays double. Refine the solution. Default `double`
+   */
+  readonly precision?: 'double' | 'single';
   /** R of R·A·C (S of S·A·S for the symmetric kinds), by original row; default ones */
   readonly rowScale?: Float64Array;
   /** C of R·A·C, by original column; default ones. Not for the symmetric kinds, where it is S too */
@@ -29,6 +34,7 @@ export interface SettledOptions {
   readonly pivoting: 'none' | 'threshold' | 'static';
   readonly threshold: number;
   readonly perturbation: number;
+  readonly single: boolean;
   readonly rowScale: Float64Array | null;
   readonly columnScale: Float64Array | null;
   readonly schur: number;
@@ -69,6 +75,7 @@ export function settleOptions(o: FrontOptions, n: number, complex: boolean): Set
     pivoting: o.kind === 'cholesky' ? 'none' : o.pivoting,
     threshold,
     perturbation,
+    single: o.precision === 'single',
     rowScale,
     columnScale: o.kind === 'lu' ? (o.columnScale ?? null) : rowScale,
     schur,

@@ -55,7 +55,13 @@ export function addOriginals(run: FrontRun, list: EntryList | null, front: Front
 }
 
 /** Adds the entries of held own columns, which are not eliminated, to the contribution block whose place 0 is front place `gone`. */
-export function addHeldOriginals(run: FrontRun, list: EntryList | null, front: Front, block: number, gone: number): void {
+export function addHeldOriginals(
+  run: FrontRun,
+  list: EntryList | null,
+  front: Front,
+  block: number,
+  gone: number,
+): void {
   const end = run.tree.firstColumn[front.s + 1];
   const begin = front.first + front.own;
   if (list === null) {

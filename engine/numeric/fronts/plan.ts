@@ -5,6 +5,8 @@ import { packedLength, panelWidth } from '../dense/workspace.ts';
 export interface FrontPlan {
   /** supernode -> scalars of its panel */
   readonly panels: Float64Array;
+  /** largest panel */
+  readonly largestPanel: number;
   /** Σ panels: the stored factor entries */
   readonly factor: number;
   /** high-water mark of the stack of contribution blocks */
@@ -38,6 +40,7 @@ export function planFronts(tree: AssemblyTree, symmetric: boolean, held: number)
   const pending = new Float64Array(tree.count);
   const extra = new Int32Array(tree.count);
   let factor = 0;
+  let largestPanel = 0;
   let top = 0;
   let stack = 0;
   let largestFront = 0;
@@ -50,6 +53,7 @@ export function planFronts(tree: AssemblyTree, symmetric: boolean, held: number)
     const m = tree.frontOrder[s] + extra[s];
     panels[s] = panelSize(symmetric, m, p);
     factor += panels[s];
+    if (panels[s] > largestPanel) largestPanel = panels[s];
     subscripts += m;
     if (m > largestFront) largestFront = m;
     if (p > mostPivots) mostPivots = p;
@@ -61,7 +65,7 @@ export function planFronts(tree: AssemblyTree, symmetric: boolean, held: number)
     pending[parent] += block;
     extra[parent] += own - p + extra[s];
   }
-  return { panels, factor, stack, packed: packedLength(largestFront, mostPivots), largestFront, subscripts };
+  return { panels, largestPanel, factor, stack, packed: packedLength(largestFront, mostPivots), largestFront, subscripts };
 }
 
 /** What the peak of a run depends on beside the tree. */
@@ -74,6 +78,8 @@ export interface PeakQuestion {
   readonly schur?: number;
   /** whether rows are paired with columns by a matching; default false */
   readonly paired?: boolean;
+  /** whether factors are stored in single precision; default false */
+  readonly single?: boolean;
 }
 
 /** Bytes of a run's arrays, by purpose. */
@@ -103,9 +109,11 @@ export function predictPeakBytes(tree: AssemblyTree, question: PeakQuestion): Pe
   const perColumn = 1 + (question.paired === true ? 1 : 0) + sides;
   const lists = symmetric ? 0 : n + 1 + 2 * entries;
   const perFront = 8;
-  const factors = scalar * (plan.factor + pivots);
+  const single = question.single === true;
+  const factors = (single ? scalar / 2 : scalar) * plan.factor + scalar * pivots;
   const stack = scalar * plan.stack;
-  const workspace = scalar * (packed + columns * plan.largestFront + panelWidth + 4);
+  const workspace =
+    scalar * ((single ? plan.largestPanel : 0) + packed + columns * plan.largestFront + panelWidth + 4);
   const indices =
     4 * (perColumn * n + sides * (plan.largestFront + plan.subscripts) + perFront * tree.count + 4 + lists);
   return { factors, stack, workspace, indices, total: factors + stack + workspace + indices };

@@ -1,5 +1,5 @@
 import type { PivotPlace, PivotReport } from '../solver.ts';
-import type { Factors } from './factors.ts';
+import { type Factors, openPanel, scratchLength } from './factors.ts';
 import type { FrontRun } from './run.ts';
 
 /** What is gathered over all pivots, one after another. */
@@ -216,12 +216,14 @@ function growth(run: FrontRun, f: Factors): number | null {
   if (f.options.kind === 'cholesky') return 1;
   if (f.options.kind === 'ldlt') return Math.max(1, run.tally.largest / run.largestEntry);
   let most = 0;
+  const scratch = new Float64Array(scratchLength(f));
+  const view = { x: scratch, base: 0 };
   const { kernels } = f;
   for (let s = 0; s < f.count; s++) {
     const m = f.listStart[s + 1] - f.listStart[s];
     const p = f.eliminated[s];
-    const x = f.chunks[f.chunkOf[s]];
-    const base = f.panelAt[s];
+    openPanel(f, s, view, scratch);
+    const { x, base } = view;
     for (let k = 0; k < p; k++) {
       const behind = base + m * p + k * (m - p);
       const a = kernels.modulus(x, base + k * m + kernels.largest(x, base + k * m, 0, k + 1));

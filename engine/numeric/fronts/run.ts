@@ -6,7 +6,7 @@ import type { PivotRule, PivotTally } from '../dense/pivoting.ts';
 import { type DenseWorkspace, packedLength, panelWidth } from '../dense/workspace.ts';
 import type { SettledOptions } from './options.ts';
 import { type FrontPlan, planFronts } from './plan.ts';
-import { Allocator, FactorStore, Stack } from './storage.ts';
+import { Allocator, type FactorArray, FactorStore, Stack } from './storage.ts';
 
 /** Operations between two calls of progress inside one front: a few milliseconds. */
 const tickOperations = 2e7;
@@ -22,6 +22,8 @@ export class FrontRun {
   readonly allocator = new Allocator();
   readonly store: FactorStore;
   readonly stack: Stack;
+  /** single precision: the panel that is being worked on; empty otherwise */
+  scratch: Float64Array;
   work: DenseWorkspace;
   /** original row -> internal row */
   readonly rowPosition: Int32Array;
@@ -76,6 +78,7 @@ export class FrontRun {
     readonly options: SettledOptions,
     readonly kernels: DenseKernels,
     progress: Progress,
+    recycled: FactorArray[] = [],
   ) {
     const n = tree.size;
     const count = tree.count;
@@ -103,7 +106,8 @@ export class FrontRun {
     this.panelAt = a.int32(count);
     this.pendingFront = a.int32(count + 1);
     this.pendingAt = a.int32(count + 1);
-    this.store = new FactorStore(a, this.plan.panels, width);
+    this.store = new FactorStore(a, this.plan.panels, width, recycled, options.single);
+    this.scratch = a.float64(options.single ? width * this.plan.largestPanel : 0);
     this.stack = new Stack(a, this.plan.stack, width);
     this.work = this.buffers(this.plan.largestFront, this.plan.packed);
     this.pivotStart = a.int32(count + 1);
@@ -136,6 +140,16 @@ export class FrontRun {
   originalRow(internal: number): number {
     const column = this.tree.order[internal];
     return this.options.rowPermutation === null ? column : this.options.rowPermutation[column];
+  }
+
+  /** The scratch panel of single precision, zeroed; larger where delayed pivots need it. */
+  scratchFor(scalars: number): Float64Array {
+    const length = this.kernels.width * scalars;
+    if (length > this.scratch.length) {
+      this.allocator.release(this.scratch);
+      this.scratch = this.allocator.float64(length + (length >> 2));
+    } else this.scratch.fill(0, 0, length);
+    return this.scratch;
   }
 
   /** Makes the dense buffers larger where delayed pivots made a front larger than planned. */

@@ -1,4 +1,4 @@
-import type { Factors } from './factors.ts';
+import { type Factors, openPanel, scratchLength } from './factors.ts';
 import { type Panel, solveLower, solveLowerTransposed, solveUpper, solveUpperTransposed } from './triangular.ts';
 
 /** Right-hand sides carried through the fronts together, so that each panel is read from memory once for all of them. */
@@ -15,6 +15,7 @@ export function solveFronts(f: Factors, x: Float64Array, columns: number, transp
   const y = new Float64Array(width * n * most);
   const z = new Float64Array(width * n * most);
   const v = new Float64Array(width * f.largestFront);
+  const scratch = new Float64Array(scratchLength(f));
   const conjugate = transposed && f.options.hermitian;
   const flipped = transposed && f.options.kind === 'lu';
   for (let c0 = 0; c0 < columns; c0 += most) {
@@ -22,8 +23,8 @@ export function solveFronts(f: Factors, x: Float64Array, columns: number, transp
     const part = x.subarray(width * n * c0, width * n * (c0 + count));
     if (conjugate) conjugateInPlace(part);
     for (let c = 0; c < count; c++) enter(f, part, y, c, flipped);
-    forward(f, y, z, v, count, flipped);
-    backward(f, y, z, v, count, flipped);
+    forward(f, y, z, v, scratch, count, flipped);
+    backward(f, y, z, v, scratch, count, flipped);
     for (let c = 0; c < count; c++) leave(f, y, part, c, flipped);
     if (conjugate) conjugateInPlace(part);
   }
@@ -69,9 +70,8 @@ function move(
 
 const panel: Panel = { x: new Float64Array(0), base: 0, ld: 0, shrink: 0, m: 0, p: 0 };
 
-function openPanel(f: Factors, s: number): void {
-  panel.x = f.chunks[f.chunkOf[s]];
-  panel.base = f.panelAt[s];
+function open(f: Factors, s: number, scratch: Float64Array): void {
+  openPanel(f, s, panel, scratch);
   panel.m = f.listStart[s + 1] - f.listStart[s];
   panel.p = f.eliminated[s];
   panel.ld = panel.m;
@@ -79,12 +79,12 @@ function openPanel(f: Factors, s: number): void {
 }
 
 /** z := solution with the first factor, in the order of elimination; y is used up. */
-function forward(f: Factors, y: Float64Array, z: Float64Array, v: Float64Array, count: number, flipped: boolean): void {
+function forward(f: Factors, y: Float64Array, z: Float64Array, v: Float64Array, scratch: Float64Array, count: number, flipped: boolean): void {
   const list = flipped ? f.columnList : f.rowList;
   const w = f.kernels.width;
   for (let s = 0; s < f.count; s++) {
     if (f.eliminated[s] === 0) continue;
-    openPanel(f, s);
+    open(f, s, scratch);
     const { m, p } = panel;
     const at = f.listStart[s];
     for (let c = 0; c < count; c++) {
@@ -108,6 +108,7 @@ function backward(
   y: Float64Array,
   z: Float64Array,
   v: Float64Array,
+  scratch: Float64Array,
   count: number,
   flipped: boolean,
 ): void {
@@ -116,7 +117,7 @@ function backward(
   const w = f.kernels.width;
   for (let s = f.count - 1; s >= 0; s--) {
     if (f.eliminated[s] === 0) continue;
-    openPanel(f, s);
+    open(f, s, scratch);
     const { m, p } = panel;
     const at = f.listStart[s];
     for (let c = 0; c < count; c++) {

@@ -6,6 +6,9 @@ const chunkLength = 2 ** 27;
 /** Longest typed array the engine asks for, in elements. */
 const longestArray = 2 ** 31 - 1;
 
+/** An array of factors: double, or rounded to single. */
+export type FactorArray = Float64Array | Float32Array;
+
 /** Makes the arrays of a numeric run and knows how many bytes are held now and were held at most. */
 export class Allocator {
   /** bytes held now */
@@ -18,13 +21,24 @@ export class Allocator {
     return this.made(length, () => new Float64Array(length));
   }
 
+  float32(length: number): Float32Array {
+    this.take(4 * length, length);
+    return this.made(length, () => new Float32Array(length));
+  }
+
   int32(length: number): Int32Array {
     this.take(4 * length, length);
     return this.made(length, () => new Int32Array(length));
   }
 
+  /** Counts an array that is taken over from a finished run. */
+  adopt(array: FactorArray): FactorArray {
+    this.take(array.byteLength, array.length);
+    return array;
+  }
+
   /** States that an array made here is no longer held. */
-  release(array: Float64Array | Int32Array): void {
+  release(array: FactorArray | Int32Array): void {
     this.bytes -= array.byteLength;
   }
 
@@ -58,47 +72,68 @@ function memoryFault(bytes: number, why: string): Fault {
  * use (delayed pivots) is given back before the next panel.
  */
 export class FactorStore {
-  readonly chunks: Float64Array[] = [];
+  readonly chunks: FactorArray[] = [];
   private readonly planned: number[] = [];
   private used = 0;
   /** scalars of the last array that were ever in use: beyond, it is zero as it was made */
   private touched = 0;
 
-  /** @param panels scalars of each panel in the order in which they will be asked for; @param width doubles a scalar */
+  /** scalars of an array that delayed pivots make necessary beyond the plan */
+  private readonly extra: number;
+
+  /**
+   * @param panels scalars of each panel in the order in which they will be asked for; @param width doubles a scalar
+   * @param recycled arrays of an earlier run that may be overwritten; @param single whether the arrays are of single precision
+   */
   constructor(
     private readonly allocator: Allocator,
     panels: Float64Array,
     private readonly width: number,
+    private readonly recycled: FactorArray[],
+    private readonly single: boolean,
   ) {
     const limit = chunkLength / width;
     let room = 0;
+    let total = 0;
     for (let s = 0; s < panels.length; s++) {
       if (room > 0 && room + panels[s] > limit) {
         this.planned.push(room);
         room = 0;
       }
       room += panels[s];
+      total += panels[s];
     }
     if (room > 0) this.planned.push(room);
     this.planned.reverse();
+    this.extra = Math.min(limit, Math.ceil(total / 8) + 1024);
   }
 
   /** Room for a panel, zeroed; its array is the last of `chunks`. @returns offset in scalars. */
   reserve(scalars: number): number {
     const width = this.width;
     const last = this.chunks.length - 1;
-    if (last < 0 || (this.used + scalars) * width > this.chunks[last].length) {
-      const planned = this.planned.pop() ?? 0;
-      const grown = Math.min(chunkLength / width, Math.max(1024, 8 * scalars));
-      this.chunks.push(this.allocator.float64(width * Math.max(scalars, planned > 0 ? planned : grown)));
-      this.used = 0;
-      this.touched = 0;
-    }
+    if (last < 0 || (this.used + scalars) * width > this.chunks[last].length) this.open(scalars);
     const at = this.used;
     this.used += scalars;
-    if (this.touched > at) this.chunks[this.chunks.length - 1].fill(0, width * at, width * this.touched);
+    const end = this.used < this.touched ? this.used : this.touched;
+    if (end > at) this.chunks[this.chunks.length - 1].fill(0, width * at, width * end);
     if (this.used > this.touched) this.touched = this.used;
     return at;
+  }
+
+  /** Starts another array, for a panel of so many scalars to begin with. */
+  private open(scalars: number): void {
+    const length = this.width * Math.max(scalars, this.planned.pop() ?? this.extra);
+    const found = this.recycled.findIndex((array) => array.length >= length && this.single === array instanceof Float32Array);
+    this.used = 0;
+    this.touched = 0;
+    if (found < 0) {
+      this.chunks.push(this.single ? this.allocator.float32(length) : this.allocator.float64(length));
+      return;
+    }
+    const [array] = this.recycled.splice(found, 1);
+    this.chunks.push(this.allocator.adopt(array));
+    this.touched = array.length / this.width;
   }
 
   /** Gives back the end of the panel reserved last: only `scalars` of it, from `at` on, are kept. */

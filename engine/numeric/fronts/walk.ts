@@ -45,10 +45,7 @@ export function walkFronts(run: FrontRun): void {
   for (let s = 0; s < run.tree.count; s++) {
     gatherFront(run, s, front);
     run.fitBuffers(front.m, front.summed);
-    front.base = run.store.reserve(panelSize(run.symmetric, front.m, front.summed));
-    front.panel = run.store.chunks[run.store.chunks.length - 1];
-    run.chunkOf[s] = run.store.chunks.length - 1;
-    run.panelAt[s] = front.base;
+    placePanel(run, front);
     addOriginals(run, entries, front);
     extendIntoPanel(run, front);
     const done = kind.eliminate(run, front);
@@ -58,9 +55,59 @@ export function walkFronts(run: FrontRun): void {
     if (done < front.summed) refuseZeroPivot(run, front, done);
     leaveBlock(run, kind, entries, front, done);
     kind.close(run, front, done);
-    run.store.keep(front.base, panelSize(run.symmetric, front.m, done));
+    keepPanel(run, front, panelSize(run.symmetric, front.m, done));
     run.tick(1000);
   }
+}
+
+/** Finds room for the panel: in the factors themselves or, when these are of single precision, in the scratch of the run. */
+function placePanel(run: FrontRun, front: Front): void {
+  const { store } = run;
+  const size = panelSize(run.symmetric, front.m, front.summed);
+  if (run.options.single) {
+    front.panel = run.scratchFor(size);
+    front.base = 0;
+    return;
+  }
+  front.base = store.reserve(size);
+  front.panel = store.chunks[store.chunks.length - 1] as Float64Array;
+  run.chunkOf[front.s] = store.chunks.length - 1;
+  run.panelAt[front.s] = front.base;
+}
+
+/** Keeps the finished panel: gives back what it did not use, or rounds it to single precision. */
+function keepPanel(run: FrontRun, front: Front, size: number): void {
+  const { store } = run;
+  if (!run.options.single) {
+    store.keep(front.base, size);
+    return;
+  }
+  const width = run.kernels.width;
+  const at = store.reserve(size);
+  const to = store.chunks[store.chunks.length - 1];
+  run.chunkOf[front.s] = store.chunks.length - 1;
+  run.panelAt[front.s] = at;
+  for (let q = 0; q < width * size; q++) {
+    to[width * at + q] = front.panel[q];
+    if (!Number.isFinite(to[width * at + q])) throw outOfRange(run, front, 0, front.panel[q]);
+  }
+  if (run.options.kind === 'ldlt') return;
+  // a pivot must not vanish by rounding (those of LDLᵀ stay double)
+  for (let k = 0; k < run.eliminated[front.s]; k++) {
+    const q = k * front.m - (run.symmetric ? (k * (k + 1)) / 2 : 0) + k;
+    const zero = to[width * (at + q)] === 0 && (width === 1 || to[width * (at + q) + 1] === 0);
+    if (zero) throw outOfRange(run, front, k, front.panel[width * q]);
+  }
+}
+
+function outOfRange(run: FrontRun, front: Front, k: number, value: number): Fault {
+  const row = run.originalRow(run.rowList[front.list + k]);
+  return new Fault(
+    'not-completed',
+    'outside-single-range',
+    `The factors hold ${value}, outside the range of single precision (in the front of original row ${row}, 0-based). Scale the matrix, or store the factors in double precision.`,
+    { row },
+  );
 }
 
 /** Makes the front's contribution block on top of its children's and puts it in their place. */

@@ -6,7 +6,9 @@ import type { FrontOptions } from '../../../engine/numeric/fronts/options.ts';
 import { solveComplexInPlace } from '../../../engine/numeric/solver.ts';
 import { plainTree } from '../../support/plainTree.ts';
 import { randomOrder } from '../../support/random.ts';
-import { backwardError, dense, factorized, randomVector, type Shape, shaped } from './support.ts';
+import { backwardError, dense, factorized, randomVector, residual, type Shape, shaped } from './support.ts';
+import { Fault } from '../../../engine/matrix/fault.ts';
+import { predictPeakBytes } from '../../../engine/numeric/fronts/plan.ts';
 
 const cases: [Shape, FrontOptions][] = [
   ['definite', { kind: 'cholesky', pivoting: 'none' }],
@@ -93,6 +95,65 @@ describe('new values on the same analysis', () => {
     const again = before.slice();
     first.solveInPlace(again, 1);
     expect(again).toEqual(x0);
+  });
+});
+
+describe('new values over the old factors', () => {
+  it.each(cases)('%s: same arrays, same result, the old factor refuses to solve', (shape, options) => {
+    const n = 60;
+    const a = shaped(shape, n, true, 23);
+    const { tree, rows } = plainTree(a, randomOrder(n, 3), 0.2);
+    const first = factorizeFronts(a, tree, rows, options);
+    const arrays = [...first.factors.chunks];
+    const a2 = { ...a, values: (a.values as Float64Array).map((v) => v * 2) };
+    const fresh = factorizeFronts(a2, tree, rows, options);
+    const second = refactorizeFronts(first, a2, noProgress, true);
+    second.factors.chunks.forEach((chunk, c) => {
+      expect(chunk).toBe(arrays[c]);
+      expect(chunk).toEqual(fresh.factors.chunks[c]);
+    });
+    expect(() => first.solveInPlace(new Float64Array(2 * n), 1)).toThrow(Fault);
+    expect(second.report).toEqual(fresh.report);
+  });
+});
+
+describe.each([false, true])('factors in single precision, complex: %s', (complex) => {
+  it.each(cases)('%s: half the memory, an error of single size, mended by refinement', (shape, options) => {
+    const n = 60;
+    const width = complex ? 2 : 1;
+    const a = shaped(shape, n, complex, 29);
+    const { tree, rows } = plainTree(a, randomOrder(n, 3), 0.2);
+    const factor = factorizeFronts(a, tree, rows, { ...options, precision: 'single' });
+    expect(factor.factors.chunks.every((c) => c instanceof Float32Array)).toBe(true);
+    const question = { kind: options.kind, complex, entries: a.rowIndex.length, single: true };
+    if (factor.report.counts.delayed === 0) expect(factor.report.peakBytes).toBe(predictPeakBytes(tree, question).total);
+    const b = randomVector(width * n * 2, 9);
+    for (const isTransposed of [false, true]) {
+      const x = b.slice();
+      const solve = (v: Float64Array, k: number) =>
+        isTransposed ? factor.solveTransposedInPlace(v, k) : factor.solveInPlace(v, k);
+      solve(x, 2);
+      const first = x.slice(0, width * n);
+      const rhs = b.slice(0, width * n);
+      const before = backwardError(a, first, rhs, isTransposed);
+      expect(before).toBeLessThan(1e-5);
+      expect(before).toBeGreaterThan(1e-11);
+      for (let step = 0; step < 5; step++) {
+        const r = residual(a, first, rhs, isTransposed);
+        solve(r, 1);
+        for (let i = 0; i < r.length; i++) first[i] += r[i];
+      }
+      expect(backwardError(a, first, rhs, isTransposed)).toBeLessThan(1e-15);
+    }
+  });
+
+  it('says so where values leave its range', () => {
+    for (const factor of [1e300, 1e-100]) {
+      const a = shaped('definite', 20, complex, 1);
+      const wild = { ...a, values: (a.values as Float64Array).map((v) => v * factor) };
+      const options = { kind: 'lu', pivoting: 'threshold', precision: 'single' } as const;
+      expect(() => factorized(wild, identityOrder(20), options)).toThrow(/outside the range of single precision/);
+    }
   });
 });
 

@@ -156,6 +156,24 @@ export function backwardError(a: SparseMatrix, x: Float64Array, b: Float64Array,
   return worst / (normA * normX + normB);
 }
 
+/** b − A·x, or b − Aᵀ·x, by the definition. */
+export function residual(a: SparseMatrix, x: Float64Array, b: Float64Array, isTransposed: boolean): Float64Array {
+  const r = b.slice();
+  const v = a.values as Float64Array;
+  for (let j = 0; j < a.columns; j++) {
+    for (let p = a.columnPointer[j]; p < a.columnPointer[j + 1]; p++) {
+      const [to, from] = isTransposed ? [j, a.rowIndex[p]] : [a.rowIndex[p], j];
+      if (a.field !== 'complex') {
+        r[to] -= v[p] * x[from];
+        continue;
+      }
+      r[2 * to] -= v[2 * p] * x[2 * from] - v[2 * p + 1] * x[2 * from + 1];
+      r[2 * to + 1] -= v[2 * p] * x[2 * from + 1] + v[2 * p + 1] * x[2 * from];
+    }
+  }
+  return r;
+}
+
 export function randomVector(length: number, seed: number): Float64Array {
   const random = new Random(seed);
   return Float64Array.from({ length }, () => 2 * random.next() - 1);
