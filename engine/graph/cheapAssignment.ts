@@ -1,4 +1,5 @@
 import type { Pattern } from '../matrix/pattern.ts';
+import { noProgress, type Progress } from '../matrix/progress.ts';
 
 /**
  * A first matching that leaves little to improve (Karp & Sipser 1981): as long as some row or column has a single free partner left,
@@ -6,7 +7,13 @@ import type { Pattern } from '../matrix/pattern.ts';
  * Linear: every line is scanned at most twice. `t` is the pattern of Aᵀ. Fills `columnOf` and `rowOf` (all −1 at the start),
  * returns the number of pairs.
  */
-export function assignInto(columnOf: Int32Array, rowOf: Int32Array, a: Pattern, t: Pattern): number {
+export function assignInto(
+  columnOf: Int32Array,
+  rowOf: Int32Array,
+  a: Pattern,
+  t: Pattern,
+  progress: Progress = noProgress,
+): number {
   const { rows, columns } = a;
   // lines: column j is j, row i is columns + i
   const degree = new Int32Array(columns + rows);
@@ -41,6 +48,7 @@ export function assignInto(columnOf: Int32Array, rowOf: Int32Array, a: Pattern, 
     columnOf[i] = j;
     rowOf[j] = i;
     size++;
+    if ((size & 0x7fff) === 0) progress(size / columns, 'cheap assignment');
     // the two no longer count as free partners; whoever has one left becomes urgent
     const columnEnd = a.columnPointer[j + 1];
     for (let p = a.columnPointer[j]; p < columnEnd; p++) {

@@ -23,9 +23,13 @@ export interface CoarseDecomposition {
  * Coarse decomposition of any pattern (Dulmage & Mendelsohn 1958; Pothen & Fan 1990). In the order under-, well-, overdetermined
  * the matrix is block upper triangular. Linear once the matching is known.
  */
-export function coarseDecomposition(a: Pattern, matching: Matching = maximumTransversal(a)): CoarseDecomposition {
+export function coarseDecomposition(
+  a: Pattern,
+  matching: Matching = maximumTransversal(a),
+  transposed: (() => Pattern) | null = null,
+): CoarseDecomposition {
   const under = alternatingReach(a, matching.rowOf, matching.columnOf);
-  const t = matching.size === a.rows ? null : transposePattern(a);
+  const t = matching.size === a.rows ? null : transposed === null ? transposePattern(a) : transposed();
   const over = t === null ? null : alternatingReach(t, matching.columnOf, matching.rowOf);
   const overRows = over === null ? new Uint8Array(a.rows) : over.near;
   const overColumns = over === null ? new Uint8Array(a.columns) : over.far;

@@ -31,9 +31,9 @@ export function maximumTransversal(
     for (let j = 0; j < a.columns; j++) columnOf[j] = rowOf[j] = j;
     return { columnOf, rowOf, size: a.columns };
   }
-  progress(0, 'matching');
+  progress(0, 'cheap assignment');
   const t = transposed === null ? transposePattern(a) : transposed();
-  let size = assignInto(columnOf, rowOf, a, t);
+  let size = assignInto(columnOf, rowOf, a, t, progress);
   size += augmentInto(columnOf, rowOf, a, t, progress);
   return { columnOf, rowOf, size };
 }

@@ -2,7 +2,7 @@ import { type Base, notSquare } from './base.ts';
 import { type Fact, fact, markWhere, undefinedFact } from './fact.ts';
 import { type MirrorScan, scanMirrors } from './mirror.ts';
 import type { Ticker } from './ticker.ts';
-import { are, counted, figure, lines, plural } from './wording.ts';
+import { counted, figure, lines, plural } from './wording.ts';
 
 export interface Constrained {
   /** rows whose only nonzero stands on the diagonal (stored zeros elsewhere do not count) */
@@ -94,10 +94,12 @@ function sentenceOf(c: Constrained, rowList: Int32Array, whole: MirrorScan): str
       : c.unitRows === c.rows
         ? ', equal to 1'
         : `, ${counted(c.unitRows)} of them equal to 1`;
+  const alone = 'nothing but the diagonal entry';
   const start =
     c.rows > 0
-      ? `${plural(c.rows, 'row')} (${lines('row', rowList, c.rows)}) ${are(c.rows)} nothing but the diagonal entry${ones}: constrained unknowns; so ${are(c.columns)} ${plural(c.columns, 'column')}.`
-      : `${plural(c.columns, 'column')} ${are(c.columns)} nothing but the diagonal entry.`;
+      ? `${plural(c.rows, 'row has', 'rows have')} ${alone}${ones} (${lines('row', rowList, c.rows)}): constrained unknowns; ` +
+        `so ${c.columns === 1 ? 'has' : 'have'} ${plural(c.columns, 'column')}.`
+      : `${plural(c.columns, 'column has', 'columns have')} ${alone}.`;
   if (c.remaining === null) return `${start} Nothing else remains.`;
   return `${start} Removing ${c.unknowns === 1 ? 'it' : 'them'} leaves ${plural(c.remaining.order, 'unknown')}${outcome(c.remaining, whole)}.`;
 }

@@ -52,7 +52,7 @@ function degreesFact(count: Int32Array, line: 'row' | 'column' | 'unknown', what
       ? `No ${line}s.`
       : value.smallest === value.largest
         ? `Every ${line} has ${many(value.largest)}.`
-        : `From ${counted(value.smallest)} to ${many(value.largest)} a ${line}, ${figure(value.mean)} on average.`;
+        : `From ${counted(value.smallest)} to ${many(value.largest)} for each ${line}, about ${figure(value.mean)} on average.`;
   return fact(value, sentence, what[1], 'exact', [markWhere(`${line}s with the most ${what[1]}`, `${line}s`, extreme)]);
 }
 

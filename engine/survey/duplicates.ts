@@ -40,7 +40,7 @@ export function duplicateRowsFact(base: Base, ticker: Ticker): Fact<DuplicateRow
   const consequence = base.sizes === null ? '' : ', so the matrix is singular';
   return fact(
     value,
-    `${plural(value.rows, 'row repeats', 'rows repeat')} an earlier row in ${what} (first: ${example})${base.matrix.rows <= base.matrix.columns ? consequence : ''}.`,
+    `${plural(value.rows, 'row repeats', 'rows repeat')} an earlier row in ${what} (first: ${example})${base.square ? consequence : ''}.`,
     'rows',
     'exact',
     marks,

@@ -40,9 +40,12 @@ export function normsFact(base: Base, ticker: Ticker): Fact<Norms> {
     equilibratedColumns: after.columns,
   };
   const told = (r: Range): string => `${figure(r.smallest)} to ${figure(r.largest)}`;
+  const ends =
+    value.rows.smallest < value.rows.largest
+      ? `row ${counted(rows.smallestAt + 1)}, row ${counted(rows.largestAt + 1)}`
+      : 'all rows alike';
   const sentence =
-    `Largest entries of the rows: ${told(value.rows)} (row ${counted(rows.smallestAt + 1)}, row ${counted(rows.largestAt + 1)}); ` +
-    `of the columns: ${told(value.columns)}. One step of equilibration would make them ` +
+    `Largest entry of each row: ${told(value.rows)} (${ends}); of each column: ${told(value.columns)}. One step of equilibration would make them ` +
     `${told(value.equilibratedRows)} and ${told(value.equilibratedColumns)}.`;
   const differs = value.rows.smallest < value.rows.largest;
   const columnsDiffer = value.columns.smallest < value.columns.largest;

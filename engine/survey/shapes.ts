@@ -83,7 +83,8 @@ function squareShapes(
       );
     }
   }
-  if (lower <= 1 && upper <= 1) say('tridiagonal', 'Tridiagonal: in this order the factors have no fill-in.');
+  if (lower <= 1 && upper <= 1)
+    say('tridiagonal', 'Tridiagonal: in this order, without row interchanges, the factors have no fill-in.');
   else if (isBand(n, lower, upper, base.entries)) {
     say('banded', `Banded: ${counted(lower)} diagonals below and ${counted(upper)} above the main one, well filled.`);
   } else if (evidence.neighbours !== null) bordered(base, evidence.neighbours, say, marks);

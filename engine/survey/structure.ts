@@ -3,6 +3,8 @@ import { coarseDecomposition } from '../graph/coarse.ts';
 import { type Classes, connectedComponents } from '../graph/components.ts';
 import { strongComponents } from '../graph/strong.ts';
 import { type Matching, maximumTransversal } from '../graph/transversal.ts';
+import type { Pattern } from '../matrix/pattern.ts';
+import { transposePattern } from '../matrix/transpose.ts';
 import { type Base, notSquare } from './base.ts';
 import { type Fact, fact, markList, markWhere, undefinedFact } from './fact.ts';
 import type { Ticker } from './ticker.ts';
@@ -19,11 +21,21 @@ export interface StructuralRank {
   readonly overdetermined: { readonly rows: number; readonly columns: number };
 }
 
-export function matchingOf(base: Base, ticker: Ticker): Matching {
-  return maximumTransversal(base.matrix, ticker.pass);
+/** The pattern of Aᵀ, formed once and only when asked for: A itself where the pattern is symmetric. */
+export function transposeOf(base: Base, patternSymmetric: boolean): () => Pattern {
+  let formed: Pattern | null = patternSymmetric ? base.matrix : null;
+  return () => {
+    formed ??= transposePattern(base.matrix);
+    return formed;
+  };
 }
 
-export function structuralRankFact(base: Base, matching: Matching): Fact<StructuralRank> {
+export function matchingOf(base: Base, transposed: () => Pattern, ticker: Ticker): Matching {
+  ticker.begin('matching');
+  return maximumTransversal(base.matrix, ticker.pass, transposed);
+}
+
+export function structuralRankFact(base: Base, matching: Matching, transposed: () => Pattern): Fact<StructuralRank> {
   const { rows, columns } = base.matrix;
   const deficiency = Math.min(rows, columns) - matching.size;
   const none = { rows: 0, columns: 0 };
@@ -37,7 +49,7 @@ export function structuralRankFact(base: Base, matching: Matching): Fact<Structu
     };
     return fact(value, `Structural rank ${counted(rows)}: full.`, 'rows');
   }
-  const coarse = coarseDecomposition(base.matrix, matching);
+  const coarse = coarseDecomposition(base.matrix, matching, transposed);
   const size = (part: { rows: Int32Array; columns: Int32Array }): { rows: number; columns: number } => ({
     rows: part.rows.length,
     columns: part.columns.length,
@@ -52,9 +64,9 @@ export function structuralRankFact(base: Base, matching: Matching): Fact<Structu
   const { underdetermined: under, overdetermined: over } = coarse;
   const parts = [
     over.rows.length > 0 &&
-      `${plural(over.rows.length, 'row')} have entries in only ${plural(over.columns.length, 'column')} (too many equations: ${lines('row', over.rows, over.rows.length)})`,
+      `${plural(over.rows.length, 'row has', 'rows have')} entries in only ${plural(over.columns.length, 'column')} (too many equations: ${lines('row', over.rows, over.rows.length)})`,
     under.columns.length > 0 &&
-      `${plural(under.columns.length, 'column')} have entries in only ${plural(under.rows.length, 'row')} (too few equations: ${lines('column', under.columns, under.columns.length)})`,
+      `${plural(under.columns.length, 'column has', 'columns have')} entries in only ${plural(under.rows.length, 'row')} (too few equations: ${lines('column', under.columns, under.columns.length)})`,
   ].filter((part) => part !== false);
   const sentence =
     deficiency === 0
@@ -103,7 +115,7 @@ function classesFact(classes: Classes, one: string, many: string): Fact<Componen
       ? `No ${many}.`
       : classes.count === 1
         ? `One ${one}.`
-        : `${counted(classes.count)} ${many}; the largest has ${plural(largest, 'unknown')}, ${counted(singletons)} have one.`;
+        : `${counted(classes.count)} ${many}; the largest has ${plural(largest, 'unknown')}${singletons === 0 ? '' : `, ${counted(singletons)} ${singletons === 1 ? 'has' : 'have'} one`}.`;
   return fact({ count: classes.count, largest, singletons }, sentence, many, 'exact', [
     markWhere('unknowns outside the largest', 'unknowns', outside),
   ]);
@@ -162,7 +174,7 @@ export function blockFormFact(
   const sentence =
     blocks <= 1
       ? 'The block triangular form is one block: nothing splits off.'
-      : `Block triangular form: ${counted(blocks)} diagonal blocks, the largest of ${plural(largest, 'row')}, ${counted(singletons)} of one row.`;
+      : `Block triangular form: ${counted(blocks)} diagonal blocks, the largest of ${plural(largest, 'row')}${singletons === 0 ? '' : `, ${counted(singletons)} of one row`}.`;
   return fact({ blocks, largest, singletons, largestSizes: Array.from(sorted.subarray(0, 10)) }, sentence, 'blocks');
 }
 

@@ -43,6 +43,7 @@ import {
   strongComponentsFact,
   strongOf,
   structuralRankFact,
+  transposeOf,
 } from './structure.ts';
 import { type Symmetries, symmetryFact } from './symmetry.ts';
 import { Ticker } from './ticker.ts';
@@ -81,7 +82,8 @@ export type FactListener = <Name extends FactName>(name: Name, fact: Survey[Name
 
 /**
  * Surveys a matrix of any shape (both triangles present; never changed). Nearly linear in entries + rows + columns; besides
- * the matrix it holds some arrays of length rows or columns, and one transposed pattern only where the structural rank is deficient.
+ * the matrix it holds some arrays of length rows or columns, and one transposed pattern where the diagonal is not fully stored and the
+ * pattern is not symmetric.
  */
 export function survey(matrix: SparseMatrix, progress: Progress = noProgress, onFact: FactListener = () => {}): Survey {
   const ticker = new Ticker(progress, expectedWork(matrix));
@@ -128,9 +130,9 @@ function relations(base: Base, ticker: Ticker, tell: Tell): void {
   const patternSymmetric = symmetry !== null && symmetry.unmatched === 0;
   const strong = components === null ? null : strongOf(base, components, patternSymmetric, ticker);
   tell('strongComponents', strong === null ? apart() : strongComponentsFact(strong));
-  ticker.begin('matching');
-  const matching = matchingOf(base, ticker);
-  tell('structuralRank', structuralRankFact(base, matching));
+  const transposed = transposeOf(base, patternSymmetric);
+  const matching = matchingOf(base, transposed, ticker);
+  tell('structuralRank', structuralRankFact(base, matching, transposed));
   const blocks = tell('blocks', blockFormFact(base, base.square ? matching : null, strong, ticker));
   tell('shapes', shapesFact(base, { components, blocks: blocks.value, neighbours }));
   tell('constrained', constrainedFact(base, scan, ticker));
