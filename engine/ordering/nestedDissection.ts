@@ -1,58 +1,125 @@
 import { graphOf } from '../graph/graph.ts';
+import { Fault } from '../matrix/fault.ts';
+import type { Pattern } from '../matrix/pattern.ts';
 import { asNewToOld } from '../matrix/permutation.ts';
-import { dissect } from './dissection/recursion.ts';
-import { ASIDE, HELD, makeWholeGraph } from './dissection/wholeGraph.ts';
-import type { OrderingMethod, OrderingOptions } from './ordering.ts';
+import type { Progress } from '../matrix/progress.ts';
+import { eliminationCost } from './dissection/eliminationCost.ts';
+import { type DissectionSettings, dissect, type SeparatorRange } from './dissection/recursion.ts';
+import { ASIDE, HELD, makeWholeGraph, type WholeGraph } from './dissection/wholeGraph.ts';
+import { heldFlags } from './heldLast.ts';
+import { denseNotes, denseRowThreshold, denseVertices } from './minimumDegree.ts';
+import { minimumDegreeOfGraph } from './minimumDegreeOfGraph.ts';
+import type { OrderingOptions, OrderingResult } from './ordering.ts';
 
 /** Options of nested dissection. */
 export interface NestedDissectionOptions extends OrderingOptions {
-  /** pieces of at most so many (merged) unknowns are ordered by minimum degree; default 200 */
+  /** pieces of at most so many vertices (indistinguishable unknowns merged) are ordered by minimum degree; default 200, at least 1 */
   readonly leafSize?: number;
-  /** most share of a piece that one side of a separator may have, 0.5 to 0.9; default 0.7 */
+  /** most share of both sides of a separator that one of them may have; default 0.7, from 0.5 to 0.9 */
   readonly balance?: number;
-  /** growing starts for a separator of the coarsest graph; default 2 */
+  /** growing starts on the coarsest graph for each separator that is carried up; default 2, at least 1 */
   readonly tries?: number;
-  /** separators carried up from the coarsest graph; default 4 */
+  /** separators carried up from the coarsest graph; default 4, at least 1 */
   readonly runs?: number;
+  /** vertices with more neighbours than this are ordered behind all others; default `denseRowThreshold(n)` */
+  readonly denseThreshold?: number;
 }
 
-/** Nested dissection, multilevel. */
-export const nestedDissection: OrderingMethod<NestedDissectionOptions> = (pattern, options, progress) => {
+/**
+ * Nested dissection (George 1973) on the graph of A + Aᵀ with multilevel vertex separators (Karypis & Kumar 1998;
+ * Hendrickson & Rothberg 1998; Ashcraft & Liu 1998) and minimum degree with halo on the leaves (Pellegrini, Roman &
+ * Amestoy 2000). Where the first separators are so small that minimum degree may do as well, both orders are counted
+ * and the better one is kept. Square patterns only. `separators` lists every separator, each before those inside its
+ * two sides; held-last unknowns and dense rows are in none.
+ * Throws `Fault` "nested-dissection-option" for options out of range and those of `heldFlags`.
+ */
+export function nestedDissection(
+  pattern: Pattern,
+  options: NestedDissectionOptions,
+  progress: Progress,
+): OrderingResult {
+  const settings = settingsOf(options);
+  progress(0, 'graph');
   const g = graphOf(pattern);
   const n = g.order;
+  const held = heldFlags(n, options.heldLast);
+  const threshold = options.denseThreshold ?? denseRowThreshold(n);
+  const dense = denseVertices(g, threshold, held);
   const state = new Uint8Array(n);
-  const held = options.heldLast ?? new Int32Array(0);
-  for (let k = 0; k < held.length; k++) state[held[k]] = HELD;
-  const limit = Math.max(16, 10 * Math.floor(Math.sqrt(n)));
-  const dense: number[] = [];
-  for (let i = 0; i < n; i++) {
-    if (state[i] !== HELD && g.pointer[i + 1] - g.pointer[i] > limit) {
-      state[i] = ASIDE;
-      dense.push(i);
+  if (held !== null) for (let i = 0; i < n; i++) if (held[i] === 1) state[i] = HELD;
+  for (let k = 0; k < dense.length; k++) state[dense[k]] = ASIDE;
+  const whole = makeWholeGraph(g, state);
+  progress(0, 'dissection');
+  let { order, separators } = dissect(whole, settings, progress);
+  const notes = denseNotes(dense.length, threshold);
+  if (held === null && isWeak(whole, separators)) {
+    const other = minimumDegreeIfBetter(whole, order, progress);
+    if (other !== null) {
+      order = other;
+      separators = [];
+      notes.push('Ordered by minimum degree, which needs fewer operations here than the dissection found.');
     }
   }
-  const whole = makeWholeGraph(g, state);
-  const settings = {
-    leafSize: options.leafSize ?? 200,
-    balance: options.balance ?? 0.7,
-    tries: options.tries ?? 2,
-    runs: options.runs ?? 4,
-    seed: options.seed ?? 1,
+  return expand(whole, order, separators, dense, options.heldLast ?? new Int32Array(0), notes);
+}
+
+function settingsOf(options: NestedDissectionOptions): DissectionSettings {
+  const { leafSize = 200, balance = 0.7, tries = 2, runs = 4, seed = 1 } = options;
+  const refuse = (name: string, value: number, range: string): never => {
+    throw new Fault('input', 'nested-dissection-option', `${name} is ${value}; it must be ${range}.`);
   };
-  const { order, separators } = dissect(whole, settings, progress);
-  const out = new Int32Array(n);
+  if (!(Number.isInteger(leafSize) && leafSize >= 1)) refuse('Leaf size', leafSize, 'a whole number of at least 1');
+  if (!(balance >= 0.5 && balance <= 0.9)) refuse('Balance', balance, 'between 0.5 and 0.9');
+  if (!(Number.isInteger(tries) && tries >= 1 && tries <= 1000)) refuse('Number of tries', tries, 'between 1 and 1000');
+  if (!(Number.isInteger(runs) && runs >= 1 && runs <= 1000)) refuse('Number of runs', runs, 'between 1 and 1000');
+  if (!Number.isInteger(seed)) refuse('Seed', seed, 'a whole number');
+  return { leafSize, balance, tries, runs, seed };
+}
+
+/** Operations an unknown that the first separators may cost in all, for minimum degree to be worth a look. */
+const WEAK_COST = 40;
+
+/** Whether eliminating the outermost separators alone is cheap, as in power networks and circuits. */
+function isWeak(whole: WholeGraph, separators: readonly SeparatorRange[]): boolean {
+  let cost = 0;
+  for (const s of separators) if (s.level === 0) cost += (s.end - s.start) ** 3 / 3;
+  return cost <= WEAK_COST * whole.freeOrder;
+}
+
+/** Steps an unknown that counting an order may take: beyond, neither order is cheap. */
+const MOST_STEPS = 100;
+
+function minimumDegreeIfBetter(whole: WholeGraph, order: Int32Array, progress: Progress): Int32Array | null {
+  const { pointer, neighbour, weight } = whole;
+  const mostSteps = MOST_STEPS * whole.order;
+  const cost = eliminationCost(whole, order, mostSteps);
+  const graph = { order: whole.order, pointer, neighbour };
+  const other = minimumDegreeOfGraph(graph, { weight }, progress).order;
+  return eliminationCost(whole, other, mostSteps) < cost ? other : null;
+}
+
+/** From vertices of the whole graph to unknowns: dense rows behind, held ones last. */
+function expand(
+  whole: WholeGraph,
+  order: Int32Array,
+  separators: readonly SeparatorRange[],
+  dense: Int32Array,
+  held: Int32Array,
+  notes: string[],
+): OrderingResult {
+  const { unknownPointer, unknown } = whole;
+  const out = new Int32Array(unknown.length + dense.length);
   const start = new Int32Array(order.length + 1);
   let at = 0;
   for (let k = 0; k < order.length; k++) {
-    for (let p = whole.unknownPointer[order[k]]; p < whole.unknownPointer[order[k] + 1]; p++)
-      out[at++] = whole.unknown[p];
+    for (let p = unknownPointer[order[k]]; p < unknownPointer[order[k] + 1]; p++) out[at++] = unknown[p];
     start[k + 1] = at;
   }
-  for (const i of dense) out[at++] = i;
-  out.set(held, at);
+  out.set(dense, at);
+  out.set(held, at + dense.length);
   return {
     order: asNewToOld(out),
-    notes: dense.length > 0 ? [`${dense.length} dense rows set aside (more than ${limit} neighbours)`] : [],
+    notes,
     separators: separators.map((s) => ({ start: start[s.start], end: start[s.end], level: s.level })),
   };
-};
+}

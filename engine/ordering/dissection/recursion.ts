@@ -1,5 +1,6 @@
 import type { Progress } from '../../matrix/progress.ts';
 import { Random } from '../../matrix/random.ts';
+import { minimumDegreeOfGraph } from '../minimumDegreeOfGraph.ts';
 import { IntegerArena } from './arena.ts';
 import { induce, type Piece } from './induce.ts';
 import { LeafOrdering } from './leaf.ts';
@@ -79,7 +80,7 @@ function dissectPiece(d: Dissection, piece: Piece, at: number, level: number): v
   d.tools.pulse();
   d.done += n;
   if (n <= d.settings.leafSize) {
-    d.leaf.orderInto(piece.name, d.order, at);
+    orderUndivided(d, piece, at);
     return;
   }
   const { arena, workspace } = d.tools;
@@ -93,7 +94,7 @@ function dissectPiece(d: Dissection, piece: Piece, at: number, level: number): v
   }
   const count1 = n - count0 - inSeparator;
   if (count0 === 0 || count1 === 0) {
-    d.leaf.orderInto(piece.name, d.order, at);
+    orderUndivided(d, piece, at);
     return;
   }
   const start = at + count0 + count1;
@@ -111,3 +112,18 @@ function dissectPiece(d: Dissection, piece: Piece, at: number, level: number): v
     arena.release(mark);
   }
 }
+
+/** A piece without a separator, as a dense one: large ones need the quotient graph, without their halo. */
+function orderUndivided(d: Dissection, piece: Piece, at: number): void {
+  const { order: n, pointer, neighbour, weight } = piece.graph;
+  if (n <= LARGEST_LEAF) {
+    d.leaf.orderInto(piece.name, d.order, at);
+    return;
+  }
+  const graph = { order: n, pointer, neighbour };
+  const order = minimumDegreeOfGraph(graph, { weight }, d.tools.pulse).order;
+  for (let k = 0; k < n; k++) d.order[at + k] = piece.name[order[k]];
+}
+
+/** Rows of bits serve up to so many vertices. */
+const LARGEST_LEAF = 1000;
