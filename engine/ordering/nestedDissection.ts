@@ -1,9 +1,10 @@
 import { graphOf } from '../graph/graph.ts';
 import { Fault } from '../matrix/fault.ts';
 import type { Pattern } from '../matrix/pattern.ts';
-import { asNewToOld } from '../matrix/permutation.ts';
 import type { Progress } from '../matrix/progress.ts';
 import { eliminationCost } from './dissection/eliminationCost.ts';
+import { expandToUnknowns } from './dissection/expand.ts';
+import { findSeparator } from './dissection/multilevelSeparator.ts';
 import { type DissectionSettings, dissect, type SeparatorRange } from './dissection/recursion.ts';
 import { ASIDE, HELD, makeWholeGraph, type WholeGraph } from './dissection/wholeGraph.ts';
 import { heldFlags } from './heldLast.ts';
@@ -50,7 +51,12 @@ export function nestedDissection(
   for (let k = 0; k < dense.length; k++) state[dense[k]] = ASIDE;
   const whole = makeWholeGraph(g, state);
   progress(0, 'dissection');
-  let { order, separators } = dissect(whole, settings, progress);
+  let { order, separators } = dissect(
+    whole,
+    settings,
+    (piece, part, tools) => findSeparator(piece.graph, part, settings, tools),
+    progress,
+  );
   const notes = denseNotes(dense.length, threshold);
   if (held === null && isWeak(whole, separators)) {
     const other = minimumDegreeIfBetter(whole, order, progress);
@@ -60,7 +66,7 @@ export function nestedDissection(
       notes.push('Ordered by minimum degree, which needs fewer operations here than the dissection found.');
     }
   }
-  return expand(whole, order, separators, dense, options.heldLast ?? new Int32Array(0), notes);
+  return expandToUnknowns(whole, order, separators, dense, options.heldLast ?? new Int32Array(0), notes);
 }
 
 function settingsOf(options: NestedDissectionOptions): DissectionSettings {
@@ -96,30 +102,4 @@ function minimumDegreeIfBetter(whole: WholeGraph, order: Int32Array, progress: P
   const graph = { order: whole.order, pointer, neighbour };
   const other = minimumDegreeOfGraph(graph, { weight }, progress).order;
   return eliminationCost(whole, other, mostSteps) < cost ? other : null;
-}
-
-/** From vertices of the whole graph to unknowns: dense rows behind, held ones last. */
-function expand(
-  whole: WholeGraph,
-  order: Int32Array,
-  separators: readonly SeparatorRange[],
-  dense: Int32Array,
-  held: Int32Array,
-  notes: string[],
-): OrderingResult {
-  const { unknownPointer, unknown } = whole;
-  const out = new Int32Array(unknown.length + dense.length);
-  const start = new Int32Array(order.length + 1);
-  let at = 0;
-  for (let k = 0; k < order.length; k++) {
-    for (let p = unknownPointer[order[k]]; p < unknownPointer[order[k] + 1]; p++) out[at++] = unknown[p];
-    start[k + 1] = at;
-  }
-  out.set(dense, at);
-  out.set(held, at + dense.length);
-  return {
-    order: asNewToOld(out),
-    notes,
-    separators: separators.map((s) => ({ start: start[s.start], end: start[s.end], level: s.level })),
-  };
 }

@@ -4,7 +4,7 @@ import { minimumDegreeOfGraph } from '../minimumDegreeOfGraph.ts';
 import { IntegerArena } from './arena.ts';
 import { induce, type Piece } from './induce.ts';
 import { LeafOrdering } from './leaf.ts';
-import { findSeparator, type SeparatorSettings, type SeparatorTools } from './multilevelSeparator.ts';
+import type { SeparatorSettings, SeparatorTools } from './multilevelSeparator.ts';
 import { SEPARATOR, SeparationWorkspace, SIDE_0 } from './separation.ts';
 import { pieceOf, type WholeGraph } from './wholeGraph.ts';
 
@@ -21,9 +21,13 @@ export interface SeparatorRange {
   readonly level: number;
 }
 
+/** Fills `part` with a separation of the piece; no side may be in it to say that it is better left undivided. */
+export type FindSeparator = (piece: Piece, part: Int32Array, tools: SeparatorTools) => void;
+
 /** What the recursion shares. */
 interface Dissection {
-  readonly settings: DissectionSettings;
+  readonly leafSize: number;
+  readonly find: FindSeparator;
   readonly tools: SeparatorTools;
   readonly leaf: LeafOrdering;
   readonly ones: Int32Array;
@@ -38,19 +42,21 @@ interface Dissection {
 /** Nested dissection (George 1973) of the free vertices: their order (position -> vertex) and the separators in it. */
 export function dissect(
   whole: WholeGraph,
-  settings: DissectionSettings,
+  { leafSize, seed }: { readonly leafSize: number; readonly seed: number },
+  find: FindSeparator,
   progress: Progress,
 ): { order: Int32Array; separators: SeparatorRange[] } {
   const n = whole.freeOrder;
   const arena = new IntegerArena(whole.neighbour.length + 8 * n);
   const workspace = new SeparationWorkspace(n);
-  const levels = Math.max(1, Math.log2(n / settings.leafSize) + 1);
+  const levels = Math.max(1, Math.log2(n / leafSize) + 1);
   const d: Dissection = {
-    settings,
+    leafSize,
+    find,
     tools: {
       arena,
       workspace,
-      random: new Random(settings.seed),
+      random: new Random(seed),
       pulse: () => progress(Math.min(1, d.done / d.expected), 'dissection'),
     },
     leaf: new LeafOrdering(whole.order, whole.pointer, whole.neighbour, whole.weight),
@@ -67,7 +73,7 @@ export function dissect(
     const from = component[c];
     // small components share leaves
     let to = component[++c];
-    while (c + 1 < component.length && component[c + 1] - from <= settings.leafSize) to = component[++c];
+    while (c + 1 < component.length && component[c + 1] - from <= leafSize) to = component[++c];
     const mark = arena.mark();
     dissectPiece(d, pieceOf(whole, from, to, d.ones, arena), from, 0);
     arena.release(mark);
@@ -79,13 +85,13 @@ function dissectPiece(d: Dissection, piece: Piece, at: number, level: number): v
   const n = piece.graph.order;
   d.tools.pulse();
   d.done += n;
-  if (n <= d.settings.leafSize) {
+  if (n <= d.leafSize) {
     orderUndivided(d, piece, at);
     return;
   }
   const { arena, workspace } = d.tools;
   const part = arena.take(n);
-  findSeparator(piece.graph, part, d.settings, d.tools);
+  d.find(piece, part, d.tools);
   let count0 = 0;
   let inSeparator = 0;
   for (let v = 0; v < n; v++) {
