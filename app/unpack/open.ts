@@ -1,32 +1,21 @@
 import type { ByteSource } from '../../engine/exchange/source.ts';
 import { Fault } from '../../engine/matrix/fault.ts';
+import { chunksOf, headOf, type Member, type RawFile, streamOf } from './raw.ts';
+import { tarMember, tarMembers } from './tar.ts';
+import { zipMember, zipMembers } from './zip.ts';
 
-/** A file as both sides can give it: a name, a size, and its bytes from the start as often as wanted. */
-export interface RawFile {
-  readonly name: string;
-  readonly size: number;
-  /** a fresh stream of chunks */
-  stream(): ReadableStream<Uint8Array<ArrayBuffer>>;
-  /** the first bytes, at most `count` */
-  head(count: number): Promise<Uint8Array>;
-}
+export { blobFile, type Member, type RawFile } from './raw.ts';
 
 /** An archive may unpack to at most so many times its size, once it passes `harmless` bytes: more is taken for an attack. */
 export const mostExpansion = 1100;
-const harmless = 1 << 30;
+const harmless = 2 ** 30;
+/** archives in archives are opened to this depth */
+const deepest = 4;
 
-/** A raw file over a Blob. */
-export function blobFile(name: string, blob: Blob): RawFile {
-  return {
-    name,
-    size: blob.size,
-    stream: () => blob.stream() as ReadableStream<Uint8Array<ArrayBuffer>>,
-    head: async (count) => new Uint8Array(await blob.slice(0, count).arrayBuffer()),
-  };
-}
+export type Packing = 'gzip' | 'zip' | 'tar' | 'none';
 
 /** How a file is packed, by its first bytes (RFC 1952; PKWARE APPNOTE; POSIX ustar). */
-export function packingOf(head: Uint8Array): 'gzip' | 'zip' | 'tar' | 'none' {
+export function packingOf(head: Uint8Array): Packing {
   if (head[0] === 0x1f && head[1] === 0x8b) return 'gzip';
   if (head[0] === 0x50 && head[1] === 0x4b && (head[2] === 3 || head[2] === 5)) return 'zip';
   const ustar = [0x75, 0x73, 0x74, 0x61, 0x72];
@@ -34,58 +23,132 @@ export function packingOf(head: Uint8Array): 'gzip' | 'zip' | 'tar' | 'none' {
   return 'none';
 }
 
-/** Chunks of a stream. */
-export async function* chunksOf(stream: ReadableStream<Uint8Array>): AsyncGenerator<Uint8Array> {
-  const reader = stream.getReader();
-  try {
-    for (;;) {
-      const { done, value } = await reader.read();
-      if (done) return;
-      if (value.length > 0) yield value;
-    }
-  } finally {
-    await reader.cancel().catch(() => {});
-  }
-}
-
-/** The stream of a gzip file, unpacked, with a guard against extreme expansion. */
-export async function* gunzipped(name: string, packed: RawFile): AsyncGenerator<Uint8Array> {
+/** The bytes of a gzip file, unpacked. */
+async function* gunzipped(packed: RawFile): AsyncGenerator<Uint8Array<ArrayBuffer>> {
   let out = 0;
   try {
     for await (const chunk of chunksOf(packed.stream().pipeThrough(new DecompressionStream('gzip')))) {
       out += chunk.length;
-      if (out > harmless && out > mostExpansion * packed.size) throw tooLarge(name);
-      yield chunk;
+      yield chunk as Uint8Array<ArrayBuffer>;
     }
   } catch (error) {
     if (error instanceof Fault) throw error;
     throw new Fault(
       'input',
       'gzip-broken',
-      `${name}, byte ${out} after unpacking: the gzip data are damaged or cut off; expected a complete gzip file. Fetch the file again.`,
-      { file: name, byteOffset: out },
+      `${packed.name}, byte ${out} after unpacking: the gzip data are damaged or cut off; expected a complete gzip file. Fetch the file again.`,
+      { file: packed.name, byteOffset: out },
     );
   }
 }
 
-export function tooLarge(name: string): Fault {
-  return new Fault(
-    'input',
-    'expansion-too-large',
-    `${name}: it unpacks to more than ${mostExpansion} times its size, which no matrix does; expected an ordinary archive.`,
-    { file: name },
-  );
+/** Stops a stream that unpacks to more than any matrix does. `packedSize`: bytes of the outermost file. */
+async function* guarded(
+  name: string,
+  packedSize: number,
+  free: number,
+  chunks: AsyncGenerator<Uint8Array<ArrayBuffer>>,
+): AsyncGenerator<Uint8Array<ArrayBuffer>> {
+  let out = 0;
+  for await (const chunk of chunks) {
+    out += chunk.length;
+    if (out > free && out > mostExpansion * packedSize) {
+      throw new Fault(
+        'input',
+        'expansion-too-large',
+        `${name}, byte ${out} after unpacking: it unpacks to more than ${mostExpansion} times its size, which no matrix does; expected an ordinary archive.`,
+        { file: name, byteOffset: out },
+      );
+    }
+    yield chunk;
+  }
 }
 
-/** The single content of an unpacked or gzip file. */
-export async function plainSource(file: RawFile): Promise<ByteSource> {
-  const packed = packingOf(await file.head(512)) === 'gzip';
-  const name = packed ? file.name.replace(/\.gz$/i, '') : file.name;
-  return {
-    name,
-    size: packed ? null : file.size,
-    packedSize: packed ? null : file.size,
-    rewindable: true,
-    open: () => (packed ? gunzipped(name, file) : chunksOf(file.stream())),
-  };
+function unpackedFile(
+  name: string,
+  size: number | null,
+  chunks: () => AsyncGenerator<Uint8Array<ArrayBuffer>>,
+): RawFile {
+  const stream = () => streamOf(chunks());
+  return { name, size, stream, head: (count) => headOf(stream(), count) };
+}
+
+/** The members of an archive (folders left out), or null for a file that is none. gzip around a tar is looked through. */
+export async function membersOf(file: RawFile): Promise<readonly Member[] | null> {
+  const packing = packingOf(await file.head(512));
+  if (packing === 'zip') return zipMembers(file);
+  if (packing === 'tar') return tarMembers(file);
+  if (packing === 'none') return null;
+  const inner = unpackedFile(file.name, null, () =>
+    guarded(file.name, file.size ?? harmless, harmless, gunzipped(file)),
+  );
+  return packingOf(await inner.head(512)) === 'tar' ? tarMembers(inner) : null;
+}
+
+/**
+ * The bytes of a file, unpacked as far as it goes: gzip by content, and one member of a zip or tar archive.
+ * @param member which one; may be left out where there is only one
+ * @param free bytes that may come out whatever the expansion
+ * @throws Fault "choose-member" listing the members, each as a repair `member=NAME`
+ */
+export async function plainSource(
+  file: RawFile,
+  member: string | null = null,
+  free: number = harmless,
+): Promise<ByteSource> {
+  return unpacked(file, member, { packedSize: file.size ?? harmless, free }, 0);
+}
+
+interface Limits {
+  /** bytes of the outermost file */
+  readonly packedSize: number;
+  readonly free: number;
+}
+
+async function unpacked(file: RawFile, member: string | null, limits: Limits, depth: number): Promise<ByteSource> {
+  const packing = packingOf(await file.head(512));
+  if (packing === 'none') {
+    return {
+      name: file.name,
+      size: depth === 0 ? file.size : null,
+      packedSize: depth === 0 ? file.size : null,
+      rewindable: true,
+      open: () => chunksOf(file.stream()),
+    };
+  }
+  if (depth === deepest) {
+    throw new Fault(
+      'input',
+      'nested-too-deep',
+      `${file.name}, byte 0: archives in archives are opened ${deepest} deep; expected a matrix by then.`,
+      { file: file.name, byteOffset: 0 },
+    );
+  }
+  const name = file.name.replace(/\.gz$/i, '').replace(/\.tgz$/i, '.tar');
+  if (packing === 'gzip') {
+    const inner = unpackedFile(name, null, () => guarded(file.name, limits.packedSize, limits.free, gunzipped(file)));
+    return unpacked(inner, member, limits, depth + 1);
+  }
+  const members = packing === 'zip' ? await zipMembers(file) : await tarMembers(file);
+  const chosen = choose(file.name, members, member);
+  const bytes = packing === 'zip' ? zipMember : tarMember;
+  const inner = unpackedFile(chosen.split('/').at(-1) ?? chosen, null, () =>
+    guarded(file.name, limits.packedSize, limits.free, bytes(file, chosen)),
+  );
+  return unpacked(inner, null, limits, depth + 1);
+}
+
+function choose(file: string, members: readonly Member[], wanted: string | null): string {
+  if (wanted === null && members.length === 1) return members[0].name;
+  if (wanted !== null && members.some((m) => m.name === wanted)) return wanted;
+  const listed = members.slice(0, 20).map((m) => `${m.name}${m.size === null ? '' : ` (${m.size} bytes)`}`);
+  const more = members.length > 20 ? ` and ${members.length - 20} more` : '';
+  const start = wanted === null ? `the archive has ${members.length} members` : `there is no member "${wanted}"`;
+  throw new Fault(
+    'input',
+    wanted === null ? 'choose-member' : 'no-member',
+    `${file}: ${start}; choose one of member ${listed.join(', ')}${more}.`,
+    { file, member: members[0].name },
+    members.slice(0, 20).map((m) => ({ id: `member=${m.name}`, text: `Read ${m.name}` })),
+  );
 }

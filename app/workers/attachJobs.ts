@@ -10,13 +10,16 @@ import { TrialContext } from '../../engine/trial/context.ts';
 import { factsOf } from '../../engine/trial/facts.ts';
 import { defaultChoice } from '../../engine/trial/rules.ts';
 import { runTrial } from '../../engine/trial/run.ts';
-import { blobFile, plainSource } from '../unpack/open.ts';
+import { blobFile, membersOf, plainSource } from '../unpack/open.ts';
 import type { Job } from './jobs.ts';
 import type { Attached, CompanionRole } from './operations.ts';
 import type { Stock } from './stock.ts';
 
 export const inspect: Job<'inspect'> = async ({ file }) => {
-  const source = await plainSource(blobFile(file.name, file));
+  const raw = blobFile(file.name, file);
+  const members = await membersOf(raw);
+  if (members !== null && members.length > 1) return { kind: 'zip', what: 'an archive', role: 'archive' };
+  const source = await plainSource(raw);
   const { head } = await firstBytes(source, 1 << 14);
   return recognise(head, source.name);
 };

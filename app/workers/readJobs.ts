@@ -14,14 +14,18 @@ export const read: Job<'read'> = async ({ key, file, repairs }, { shelf, progres
   const options = repairs.reduce(applyRepair, defaultReadOptions);
   let last = 0;
   const loaded = shareLoaded(
-    await readMatrix(await plainSource(blobFile(file.name, file)), options, (bytesDone, bytesAll, phase) => {
-      const fraction = bytesAll === null || bytesAll === 0 ? 0 : Math.min(1, bytesDone / bytesAll);
-      progress(fraction, phase);
-      const now = performance.now();
-      if (now - last < reportEvery) return;
-      last = now;
-      early({ bytesDone, bytesAll }, fraction, phase);
-    }),
+    await readMatrix(
+      await plainSource(blobFile(file.name, file), options.member),
+      options,
+      (bytesDone, bytesAll, phase) => {
+        const fraction = bytesAll === null || bytesAll === 0 ? 0 : Math.min(1, bytesDone / bytesAll);
+        progress(fraction, phase);
+        const now = performance.now();
+        if (now - last < reportEvery) return;
+        last = now;
+        early({ bytesDone, bytesAll }, fraction, phase);
+      },
+    ),
   );
   progress(1, 'looking at the diagonal');
   const stock = { loaded, coordinates: null, imported: null };

@@ -16,7 +16,7 @@ import type { Call } from './parse.ts';
 export async function loadMatrix(call: Call): Promise<Loaded> {
   let options: ReadOptions = defaultReadOptions;
   for (const word of call.texts('read')) options = applyRepair(options, word);
-  return readMatrix(await plainSource(await pathFile(call.files[0])), options, () => {});
+  return readMatrix(await plainSource(await pathFile(call.files[0]), options.member), options, () => {});
 }
 
 /** The matrix with what the call gives beside it: a permutation, unknowns held last. */

@@ -31,6 +31,8 @@ export interface ReadOptions {
   readonly imaginary: 'keep' | 'drop-zero';
   /** plain coordinate text holds all entries, or one triangle of a symmetric matrix */
   readonly storage: 'general' | 'symmetric';
+  /** which member of an archive, by its name there; null: the only one */
+  readonly member: string | null;
 }
 
 export const defaultReadOptions: ReadOptions = {
@@ -47,6 +49,7 @@ export const defaultReadOptions: ReadOptions = {
   table: 'refuse',
   imaginary: 'keep',
   storage: 'general',
+  member: null,
 };
 
 /** repair id -> the settings it stands for */
@@ -76,13 +79,14 @@ export const repairIds: readonly string[] = Object.keys(repairSettings);
 /** The options with one repair applied. @throws Fault for an unknown word. */
 export function applyRepair(options: ReadOptions, id: string): ReadOptions {
   const below = /^drop-below=(\d*\.?\d+(?:e[+-]?\d+)?)$/i.exec(id);
+  if (id.startsWith('member=')) return { ...options, member: id.slice('member='.length) };
   if (below !== null) return { ...options, zeros: 'drop', dropBelow: Number(below[1]) };
   const change = Object.hasOwn(repairSettings, id) ? repairSettings[id] : undefined;
   if (change === undefined) {
     throw new Fault(
       'input',
       'unknown-repair',
-      `Unknown way of reading "${id}"; known: ${repairIds.join(', ')}, drop-below=NUMBER.`,
+      `Unknown way of reading "${id}"; known: ${repairIds.join(', ')}, drop-below=NUMBER, member=NAME.`,
     );
   }
   return { ...options, ...change };

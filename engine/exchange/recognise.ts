@@ -53,7 +53,8 @@ export function recognise(firstBytes: Uint8Array, name: string): Recognised {
   if (firstBytes.length === 0) return { kind: 'empty', what: 'an empty file', role: 'unknown' };
   const text = ascii(firstBytes, 1 << 14).replace(/^\xef\xbb\xbf/, '');
   if (text.startsWith('\x1f\x8b')) return { kind: 'gzip', what: 'a gzip file', role: 'archive' };
-  if (/^PK(\x03\x04|\x05\x06)/.test(text)) return { kind: 'zip', what: 'a zip archive', role: 'archive' };
+  if (text.startsWith('PK\x03\x04') || text.startsWith('PK\x05\x06'))
+    return { kind: 'zip', what: 'a zip archive', role: 'archive' };
   if (text.slice(257, 262) === 'ustar') return { kind: 'tar', what: 'a tar archive', role: 'archive' };
   for (const [start, what] of signatures) if (text.startsWith(start)) return { kind: 'foreign', what, role: 'unknown' };
   if (/^\s*%{1,2}matrixmarket/i.test(text)) return market(text, name);

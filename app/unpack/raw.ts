@@ -1,0 +1,71 @@
+/** A file as both sides can give it: a name, a size, and its bytes from the start as often as wanted. */
+export interface RawFile {
+  readonly name: string;
+  /** bytes; null where only unpacking would tell */
+  readonly size: number | null;
+  /** a fresh stream of chunks */
+  stream(): ReadableStream<Uint8Array<ArrayBuffer>>;
+  /** the first bytes, at most `count` */
+  head(count: number): Promise<Uint8Array>;
+}
+
+/** A file in an archive. */
+export interface Member {
+  /** with its folders, as the archive has it */
+  readonly name: string;
+  /** unpacked bytes where the archive says so */
+  readonly size: number | null;
+}
+
+/** A raw file over a Blob. */
+export function blobFile(name: string, blob: Blob): RawFile {
+  return {
+    name,
+    size: blob.size,
+    stream: () => blob.stream() as ReadableStream<Uint8Array<ArrayBuffer>>,
+    head: async (count) => new Uint8Array(await blob.slice(0, count).arrayBuffer()),
+  };
+}
+
+/** Chunks of a stream; leaving the loop early cancels it. */
+export async function* chunksOf(
+  stream: ReadableStream<Uint8Array<ArrayBuffer>>,
+): AsyncGenerator<Uint8Array<ArrayBuffer>> {
+  const reader = stream.getReader();
+  try {
+    for (;;) {
+      const { done, value } = await reader.read();
+      if (done) return;
+      if (value.length > 0) yield value;
+    }
+  } finally {
+    await reader.cancel().catch(() => {});
+  }
+}
+
+/** The other way round. */
+export function streamOf(chunks: AsyncGenerator<Uint8Array<ArrayBuffer>>): ReadableStream<Uint8Array<ArrayBuffer>> {
+  return new ReadableStream({
+    async pull(controller) {
+      const next = await chunks.next();
+      if (next.done) controller.close();
+      else controller.enqueue(next.value);
+    },
+    async cancel() {
+      await chunks.return(undefined);
+    },
+  });
+}
+
+/** The first bytes of a stream, at most `count`. */
+export async function headOf(stream: ReadableStream<Uint8Array<ArrayBuffer>>, count: number): Promise<Uint8Array> {
+  const head = new Uint8Array(count);
+  let size = 0;
+  for await (const chunk of chunksOf(stream)) {
+    const part = chunk.subarray(0, count - size);
+    head.set(part, size);
+    size += part.length;
+    if (size === count) break;
+  }
+  return head.subarray(0, size);
+}
