@@ -26,16 +26,10 @@ export async function* lineBlocks(source: ByteSource, onBytes: (bytes: number) =
   let carried = 0;
   let pulled = 0;
   let offset = 0;
-  let first = true;
   for await (const chunk of source.open()) {
     pulled += chunk.length;
     onBytes(pulled);
     let start = 0;
-    if (first && carried === 0 && chunk.length >= 3 && chunk[0] === 0xef && chunk[1] === 0xbb && chunk[2] === 0xbf) {
-      start = 3;
-      offset = 3;
-    }
-    first = false;
     const cut = lastLineEnd(chunk, start);
     if (cut <= start) {
       carry = append(carry, carried, chunk.subarray(start));
@@ -49,12 +43,12 @@ export async function* lineBlocks(source: ByteSource, onBytes: (bytes: number) =
       carry = append(carry, carried, chunk.subarray(start, lineEnd));
       const size = carried + lineEnd - start;
       carried = 0;
-      yield { bytes: carry, start: 0, end: size, offset };
+      yield withoutMark({ bytes: carry, start: 0, end: size, offset });
       offset += size;
       start = lineEnd;
     }
     if (cut > start) {
-      yield { bytes: chunk, start, end: cut, offset };
+      yield withoutMark({ bytes: chunk, start, end: cut, offset });
       offset += cut - start;
     }
     if (cut < chunk.length) {
@@ -62,7 +56,15 @@ export async function* lineBlocks(source: ByteSource, onBytes: (bytes: number) =
       carried = chunk.length - cut;
     }
   }
-  if (carried > 0) yield { bytes: carry, start: 0, end: carried, offset };
+  if (carried > 0) yield withoutMark({ bytes: carry, start: 0, end: carried, offset });
+}
+
+/** The first block of a file without its byte-order mark. */
+function withoutMark(block: LineBlock): LineBlock {
+  const { bytes, start, end, offset } = block;
+  if (offset > 0 || end - start < 3) return block;
+  if (bytes[start] !== 0xef || bytes[start + 1] !== 0xbb || bytes[start + 2] !== 0xbf) return block;
+  return { bytes, start: start + 3, end, offset: 3 };
 }
 
 /** Behind the last line end that is complete: a CR at the very end may be half of a CR LF, so it does not count. */

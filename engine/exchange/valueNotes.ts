@@ -30,7 +30,7 @@ export function valueNotes(
       if (places.length < 5) places.push(k);
     }
     if (im !== 0) imaginary++;
-    if (re > 9007199254740992 || re < -9007199254740992) inexact++;
+    if (re >= 9007199254740992 || re <= -9007199254740992) inexact++;
   }
   if (zeros > 0) {
     notes.push({
@@ -56,7 +56,7 @@ export function valueNotes(
   if (a.field === 'integer' && inexact > 0) {
     notes.push({
       code: 'large-integers',
-      text: `${inexact} integers are above 2^53 in modulus; they are held as the nearest double and may have lost their last digits.`,
+      text: `${inexact} integers are 2^53 or more in modulus; they are held as the nearest double and may have lost their last digits.`,
     });
   }
   if (a.field === 'real' || width === 2) noteFewDigits(values, notes);
