@@ -198,7 +198,7 @@ function mergeInto(w: Int32Array, i: number, flag: number, interiorEnd: number):
 
 /**
  * Stage 5: what is left of the element p, weights positive again, full degrees, variables back in their degree lists.
- * NEXT of p becomes the list of least degree among them (or the halo list).
+ * They queue behind the others of equal degree, or step before them (`atFront`). NEXT of p becomes the list of least degree among them (or the halo list).
  * @returns the end of the element's list
  */
 export function finishElement(
@@ -208,6 +208,7 @@ export function finishElement(
   interiorEnd: number,
   heads: number,
   haloList: number,
+  atFront: boolean,
 ): number {
   const begin = w[p + START];
   const end = begin + w[p + LENGTH];
@@ -225,11 +226,13 @@ export function finishElement(
     w[i + DEGREE] = degree;
     const list = i < interiorEnd ? heads + 4 * degree + (wi > 1 ? 2 : 0) - NEXT : haloList;
     if (list < least) least = list;
-    const last = w[list + PREVIOUS];
-    w[i + PREVIOUS] = last;
-    w[i + NEXT] = list;
-    w[last + NEXT] = i;
-    w[list + PREVIOUS] = i;
+    // right after `before`: behind all others of the list, or before them
+    const before = atFront ? list : w[list + PREVIOUS];
+    const next = w[before + NEXT];
+    w[i + PREVIOUS] = before;
+    w[i + NEXT] = next;
+    w[before + NEXT] = i;
+    w[next + PREVIOUS] = i;
   }
   w[p + WEIGHT] = 0;
   w[p + LENGTH] = at - begin;

@@ -20,7 +20,6 @@ import {
   DEGREE,
   ELEMENTS,
   FLAG_LIMIT,
-  type Layout,
   LENGTH,
   lowerMarksInPlace,
   NEXT,
@@ -53,15 +52,19 @@ export function minimumDegreeOfGraph(
 ): MinimumDegreeGraphResult {
   const q = startQuotientGraph(graph, options, (totalWeight) => 2 * (totalWeight + 2));
   const haloList = q.layout.heads + 4 * (q.totalWeight + 1) - NEXT;
-  linkInPlace(q.w, q.layout, sweepOrder(q.w, q.interior), haloList);
-  const pivots = eliminateInPlace(q, haloList, options.onPivot, progress);
+  linkInPlace(q, sweepOrder(q.w, q.interior), haloList);
+  const pivots = eliminateByDegreeInPlace(q, haloList, false, options.onPivot, progress);
   return { order: collectOrder(q, pivots), pivots };
 }
 
-/** Eliminates every interior vertex, one pivot of least approximate degree after the other. Returns the number of pivots. */
-function eliminateInPlace(
+/**
+ * Eliminates every interior vertex, one pivot of least approximate degree after the other; `atFront`: ties to the latest instead of the
+ * earliest. Returns the number of pivots.
+ */
+export function eliminateByDegreeInPlace(
   graph: QuotientGraph,
   haloList: number,
+  atFront: boolean,
   onPivot: MinimumDegreeGraphOptions['onPivot'],
   progress: Progress,
 ): number {
@@ -72,7 +75,7 @@ function eliminateInPlace(
   let list = heads - NEXT;
   let remaining = totalWeight;
   let flag = 1;
-  let largest = 0;
+  let largest = graph.largestElement;
   let pivots = 0;
   let work = 0;
   while (remaining > haloWeight) {
@@ -81,9 +84,7 @@ function eliminateInPlace(
     const after = w[p + NEXT];
     w[list + NEXT] = after;
     w[after + PREVIOUS] = list;
-    if (onPivot !== undefined) {
-      onPivot(vertexAt[p / RECORD], w[p + WEIGHT], w[p + DEGREE]);
-    }
+    if (onPivot !== undefined) onPivot(vertexAt[p / RECORD], w[p + WEIGHT], w[p + DEGREE]);
     remaining -= w[p + WEIGHT];
     const inPlace = w[p + ELEMENTS] === 0;
     if (!inPlace) {
@@ -99,7 +100,7 @@ function eliminateInPlace(
     updateDegrees(w, p, flag, interiorEnd, buckets, bucketMask);
     flag = mergeIndistinguishable(w, p, flag + largest + 1, interiorEnd);
     remaining -= weight - w[p + DEGREE];
-    const stop = finishElement(w, p, remaining, interiorEnd, heads, haloList);
+    const stop = finishElement(w, p, remaining, interiorEnd, heads, haloList, atFront);
     if (!inPlace) free = stop;
     if (w[p + NEXT] < list) list = w[p + NEXT];
     work += w[p + LENGTH] + 10;
@@ -112,7 +113,8 @@ function eliminateInPlace(
 }
 
 /** Puts the free vertices into the degree lists in the given order, halo vertices into a list of their own, and empties the buckets. */
-export function linkInPlace(w: Int32Array, layout: Layout, entry: Int32Array, haloList: number): void {
+export function linkInPlace(graph: QuotientGraph, entry: Int32Array, haloList: number): void {
+  const { w, layout, vertexAt } = graph;
   const { heads, buckets, bucketMask } = layout;
   for (let list = heads - NEXT; list <= haloList; list += 2) {
     w[list + NEXT] = list;
@@ -123,7 +125,7 @@ export function linkInPlace(w: Int32Array, layout: Layout, entry: Int32Array, ha
     const r = entry[k];
     append(w, heads + 4 * w[r + DEGREE] + (w[r + WEIGHT] > 1 ? 2 : 0) - NEXT, r);
   }
-  for (let k = entry.length; k < layout.order; k++) append(w, haloList, RECORD * k);
+  for (let k = entry.length; k < vertexAt.length; k++) append(w, haloList, RECORD * k);
 }
 
 function append(w: Int32Array, list: number, r: number): void {

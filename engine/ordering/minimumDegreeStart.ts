@@ -175,6 +175,8 @@ export interface QuotientGraph {
   /** unknowns in all, and in the halo */
   readonly totalWeight: number;
   readonly haloWeight: number;
+  /** largest weight of an element there is from the start; 0 without any */
+  readonly largestElement: number;
 }
 
 /** What any elimination of least degree or least fill starts from. */
@@ -207,7 +209,7 @@ export function startQuotientGraph(
   const layout = layoutFor(vertexAt.length, graph.neighbour.length, lists(totalWeight));
   const w = options.workspace === undefined ? new Int32Array(layout.end) : options.workspace.take(layout.end);
   const free = fillInPlace(w, layout, graph, vertexAt, weight);
-  return { w, layout, free, vertexAt, interior, totalWeight, haloWeight };
+  return { w, layout, free, vertexAt, interior, totalWeight, haloWeight, largestElement: 0 };
 }
 
 /** After the last pivot, the order of the interior vertices: pivot after pivot, each followed by the vertices that went with it. */

@@ -52,7 +52,7 @@ function eliminateByFillInPlace(graph: QuotientGraph, progress: Progress): numbe
   let free = graph.free;
   let remaining = totalWeight;
   let flag = 1;
-  let largest = 0;
+  let largest = graph.largestElement;
   let pivots = 0;
   let work = 0;
   while (remaining > haloWeight) {
@@ -97,13 +97,13 @@ function eliminateByFillInPlace(graph: QuotientGraph, progress: Progress): numbe
 
 /** First lists: nothing is joined yet. Sweep order among equal scores. */
 function linkByFillInPlace(graph: QuotientGraph, haloList: number): ListSet {
-  const { w, layout, interior } = graph;
+  const { w, layout, interior, vertexAt } = graph;
   const { heads, buckets, bucketMask } = layout;
   for (let list = heads - NEXT; list <= haloList; list += 2) w[list + NEXT] = w[list + PREVIOUS] = list;
   w.fill(-1, buckets, buckets + bucketMask + 1);
   const occupied = new ListSet(FILL_LISTS);
   const entry = sweepOrder(w, interior);
-  for (let k = 0; k < layout.order; k++) {
+  for (let k = 0; k < vertexAt.length; k++) {
     const r = k < interior ? entry[k] : RECORD * k;
     let list = haloList;
     if (k < interior) {
