@@ -1,5 +1,6 @@
 import type { DenseKernels } from './kernels.ts';
-import { type DenseWorkspace, panelWidth, sweepRows, updateDepth } from './workspace.ts';
+import { sweepUpdate } from './sweep.ts';
+import { type DenseWorkspace, panelWidth, updateDepth } from './workspace.ts';
 
 /**
  * Partial Cholesky of a front, right-looking in blocks: columns 0 … p − 1 of the panel become those of L. In place.
@@ -30,12 +31,7 @@ export function partialCholesky(
       right = work.right;
       kernels.pack(right, 0, x, base, ld, shrink, k0, k1, k1, p, true);
     }
-    const depth = k1 - k0;
-    for (let i0 = k1; i0 < m; i0 += sweepRows) {
-      const i1 = i0 + sweepRows < m ? i0 + sweepRows : m;
-      kernels.update(x, base, ld, shrink, i0, i1, k1, p, true, left, (i0 - k1) * depth, right, 0, depth);
-    }
-    tick(2 * depth * (m - k1) * (p - k1));
+    sweepUpdate(kernels, x, base, ld, shrink, k1, m, k1, p, true, left, right, k1 - k0, tick);
   }
   return -1;
 }
@@ -71,10 +67,6 @@ export function updateFromCholesky(
       right = work.right;
       kernels.pack(right, 0, x, base, ld, shrink, k0, k1, i0, m, true);
     }
-    for (let r0 = 0; r0 < size; r0 += sweepRows) {
-      const r1 = r0 + sweepRows < size ? r0 + sweepRows : size;
-      kernels.update(c, cBase, cLd, cShrink, r0, r1, 0, r1, true, left, r0 * depth, right, 0, depth);
-      tick(2 * depth * (r1 - r0) * r1);
-    }
+    sweepUpdate(kernels, c, cBase, cLd, cShrink, 0, size, 0, size, true, left, right, depth, tick);
   }
 }

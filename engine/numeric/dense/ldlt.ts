@@ -1,6 +1,7 @@
 import type { DenseKernels } from './kernels.ts';
 import type { PivotRule, PivotTally } from './pivoting.ts';
-import { type DenseWorkspace, panelWidth, sweepRows, updateDepth } from './workspace.ts';
+import { sweepUpdate } from './sweep.ts';
+import { type DenseWorkspace, panelWidth, updateDepth } from './workspace.ts';
 
 /** A symmetric front under LDLᵀ or LDLᴴ. Its panel is a lower trapezoid with ld = m. */
 export interface SymmetricPanel {
@@ -52,8 +53,8 @@ export function partialLdlt(
     }
     if (done > k0) {
       progress = true;
-      trail(kernels, work, panel, rule.hermitian, k0, done);
-      tick(2 * (done - k0) * (m - k0) * (p - k0));
+      trail(kernels, work, panel, rule.hermitian, k0, done, tick);
+      tick((done - k0) * (done - k0) * (m - k0));
     }
     if (rule.pivoting !== 'threshold' && done < blockEnd) break;
     if (done < end) continue;
@@ -245,6 +246,7 @@ function trail(
   hermitian: boolean,
   k0: number,
   done: number,
+  tick: (operations: number) => void,
 ): void {
   const { x, base, m, p, d, e, dAt } = panel;
   if (done === p) return;
@@ -253,10 +255,7 @@ function trail(
   kernels.pack(left, 0, x, base, m, 1, k0, done, done, m, false);
   const groups = Math.ceil((p - done) / kernels.group);
   kernels.scaleGroups(right, left, groups, depth, d, e, dAt + k0, hermitian);
-  for (let i0 = done; i0 < m; i0 += sweepRows) {
-    const i1 = i0 + sweepRows < m ? i0 + sweepRows : m;
-    kernels.update(x, base, m, 1, i0, i1, done, p, true, left, (i0 - done) * depth, right, 0, depth);
-  }
+  sweepUpdate(kernels, x, base, m, 1, done, m, done, p, true, left, right, depth, tick);
 }
 
 /**
@@ -285,11 +284,7 @@ export function updateFromLdlt(
     const depth = k1 - k0;
     kernels.pack(left, 0, x, base, m, 1, k0, k1, i0, m, false);
     kernels.scaleGroups(right, left, groups, depth, d, e, dAt + k0, hermitian);
-    for (let r0 = 0; r0 < size; r0 += sweepRows) {
-      const r1 = r0 + sweepRows < size ? r0 + sweepRows : size;
-      kernels.update(c, cBase, cLd, 1, r0, r1, 0, r1, true, left, r0 * depth, right, 0, depth);
-      tick(2 * depth * (r1 - r0) * r1);
-    }
+    sweepUpdate(kernels, c, cBase, cLd, 1, 0, size, 0, size, true, left, right, depth, tick);
   }
 }
 

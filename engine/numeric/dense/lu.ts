@@ -1,7 +1,8 @@
 import type { DenseKernels } from './kernels.ts';
 import { swapScalars } from './ldlt.ts';
 import type { PivotRule, PivotTally } from './pivoting.ts';
-import { type DenseWorkspace, panelWidth, sweepRows, updateDepth } from './workspace.ts';
+import { sweepUpdate } from './sweep.ts';
+import { type DenseWorkspace, panelWidth, updateDepth } from './workspace.ts';
 
 /**
  * An unsymmetric front under LU. `x` from `base` on: the m × p rectangle of fully summed columns (ld = m); behind it, transposed,
@@ -55,8 +56,8 @@ export function partialLu(
     }
     if (done > k0) {
       progress = true;
-      trail(kernels, work, panel, k0, done);
-      tick(2 * (done - k0) * (2 * m - p - k0) * (p - k0));
+      trail(kernels, work, panel, k0, done, tick);
+      tick(2 * (done - k0) * (done - k0) * (m - k0));
     }
     if (rule.pivoting !== 'threshold' && done < blockEnd) break;
     if (done < end) continue;
@@ -154,7 +155,14 @@ function swapRows(kernels: DenseKernels, panel: GeneralPanel, a: number, b: numb
 }
 
 /** Brings the remaining fully summed columns and rows up to date with the pivots k0 … done − 1. */
-function trail(kernels: DenseKernels, work: DenseWorkspace, panel: GeneralPanel, k0: number, done: number): void {
+function trail(
+  kernels: DenseKernels,
+  work: DenseWorkspace,
+  panel: GeneralPanel,
+  k0: number,
+  done: number,
+  tick: (operations: number) => void,
+): void {
   const { x, base, m, p } = panel;
   const { left, right } = work;
   const depth = done - k0;
@@ -166,7 +174,7 @@ function trail(kernels: DenseKernels, work: DenseWorkspace, panel: GeneralPanel,
   if (done < p) {
     kernels.pack(left, 0, x, base, m, 0, k0, done, done, m, false);
     kernels.packTransposed(right, 0, x, base, m, done, p, k0, done);
-    sweep(kernels, x, base, m, done, m, done, p, left, right, depth);
+    sweepUpdate(kernels, x, base, m, 0, done, m, done, p, false, left, right, depth, tick);
   }
   const below = m - p;
   if (below === 0) return;
@@ -180,7 +188,7 @@ function trail(kernels: DenseKernels, work: DenseWorkspace, panel: GeneralPanel,
   if (done === p) return;
   kernels.pack(left, 0, x, behind, below, 0, k0, done, 0, below, false);
   kernels.pack(right, 0, x, base, m, 0, k0, done, done, p, false);
-  sweep(kernels, x, behind, below, 0, below, done, p, left, right, depth);
+  sweepUpdate(kernels, x, behind, below, 0, 0, below, done, p, false, left, right, depth, tick);
 }
 
 /** f[l − l0] := X(row, l) of a rectangle, l0 ≤ l < l1. */
@@ -198,26 +206,6 @@ function copyRow(
     const s = wide * (base + l * ld + row);
     f[wide * (l - l0)] = x[s];
     if (wide === 2) f[2 * (l - l0) + 1] = x[s + 1];
-  }
-}
-
-/** Update of rows i0 … i1 − 1, columns j0 … j1 − 1 of a rectangle, some rows at a time. */
-function sweep(
-  kernels: DenseKernels,
-  c: Float64Array,
-  base: number,
-  ld: number,
-  i0: number,
-  i1: number,
-  j0: number,
-  j1: number,
-  left: Float64Array,
-  right: Float64Array,
-  depth: number,
-): void {
-  for (let r0 = i0; r0 < i1; r0 += sweepRows) {
-    const r1 = r0 + sweepRows < i1 ? r0 + sweepRows : i1;
-    kernels.update(c, base, ld, 0, r0, r1, j0, j1, false, left, (r0 - i0) * depth, right, 0, depth);
   }
 }
 
@@ -244,10 +232,6 @@ export function updateFromLu(
     const depth = k1 - k0;
     kernels.pack(left, 0, x, base, m, 0, k0, k1, p, m, false);
     kernels.pack(right, 0, x, behind, below, 0, k0, k1, 0, below, false);
-    for (let r0 = 0; r0 < below; r0 += sweepRows) {
-      const r1 = r0 + sweepRows < below ? r0 + sweepRows : below;
-      kernels.update(c, cBase, cLd, 0, r0, r1, 0, below, false, left, r0 * depth, right, 0, depth);
-      tick(2 * depth * (r1 - r0) * below);
-    }
+    sweepUpdate(kernels, c, cBase, cLd, 0, 0, below, 0, below, false, left, right, depth, tick);
   }
 }

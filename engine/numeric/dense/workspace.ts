@@ -4,9 +4,6 @@ export const panelWidth = 32;
 /** Depth of one packed update of a contribution block: a group of this depth stays in the first cache level. */
 export const updateDepth = 256;
 
-/** Rows of A packed groups swept at a time, so that they stay in the second cache level while B streams past. */
-export const sweepRows = 128;
-
 /** Buffers of the dense kernels, made once a run. */
 export interface DenseWorkspace {
   /** packed left operand */

@@ -65,7 +65,15 @@ export function planFronts(tree: AssemblyTree, symmetric: boolean, held: number)
     pending[parent] += block;
     extra[parent] += own - p + extra[s];
   }
-  return { panels, largestPanel, factor, stack, packed: packedLength(largestFront, mostPivots), largestFront, subscripts };
+  return {
+    panels,
+    largestPanel,
+    factor,
+    stack,
+    packed: packedLength(largestFront, mostPivots),
+    largestFront,
+    subscripts,
+  };
 }
 
 /** What the peak of a run depends on beside the tree. */
@@ -112,8 +120,7 @@ export function predictPeakBytes(tree: AssemblyTree, question: PeakQuestion): Pe
   const single = question.single === true;
   const factors = (single ? scalar / 2 : scalar) * plan.factor + scalar * pivots;
   const stack = scalar * plan.stack;
-  const workspace =
-    scalar * ((single ? plan.largestPanel : 0) + packed + columns * plan.largestFront + panelWidth + 4);
+  const workspace = scalar * ((single ? plan.largestPanel : 0) + packed + columns * plan.largestFront + panelWidth + 4);
   const indices =
     4 * (perColumn * n + sides * (plan.largestFront + plan.subscripts) + perFront * tree.count + 4 + lists);
   return { factors, stack, workspace, indices, total: factors + stack + workspace + indices };

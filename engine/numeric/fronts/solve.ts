@@ -79,7 +79,15 @@ function open(f: Factors, s: number, scratch: Float64Array): void {
 }
 
 /** z := solution with the first factor, in the order of elimination; y is used up. */
-function forward(f: Factors, y: Float64Array, z: Float64Array, v: Float64Array, scratch: Float64Array, count: number, flipped: boolean): void {
+function forward(
+  f: Factors,
+  y: Float64Array,
+  z: Float64Array,
+  v: Float64Array,
+  scratch: Float64Array,
+  count: number,
+  flipped: boolean,
+): void {
   const list = flipped ? f.columnList : f.rowList;
   const w = f.kernels.width;
   for (let s = 0; s < f.count; s++) {

@@ -124,7 +124,9 @@ export class FactorStore {
   /** Starts another array, for a panel of so many scalars to begin with. */
   private open(scalars: number): void {
     const length = this.width * Math.max(scalars, this.planned.pop() ?? this.extra);
-    const found = this.recycled.findIndex((array) => array.length >= length && this.single === array instanceof Float32Array);
+    const found = this.recycled.findIndex(
+      (array) => array.length >= length && this.single === array instanceof Float32Array,
+    );
     this.used = 0;
     this.touched = 0;
     if (found < 0) {

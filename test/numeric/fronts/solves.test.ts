@@ -1,14 +1,14 @@
 import { describe, expect, it } from 'vitest';
+import { Fault } from '../../../engine/matrix/fault.ts';
 import { asNewToOld, identityOrder } from '../../../engine/matrix/permutation.ts';
 import { Cancelled, noProgress } from '../../../engine/matrix/progress.ts';
 import { factorizeFronts, refactorizeFronts } from '../../../engine/numeric/fronts/frontFactor.ts';
 import type { FrontOptions } from '../../../engine/numeric/fronts/options.ts';
+import { predictPeakBytes } from '../../../engine/numeric/fronts/plan.ts';
 import { solveComplexInPlace } from '../../../engine/numeric/solver.ts';
 import { plainTree } from '../../support/plainTree.ts';
 import { randomOrder } from '../../support/random.ts';
 import { backwardError, dense, factorized, randomVector, residual, type Shape, shaped } from './support.ts';
-import { Fault } from '../../../engine/matrix/fault.ts';
-import { predictPeakBytes } from '../../../engine/numeric/fronts/plan.ts';
 
 const cases: [Shape, FrontOptions][] = [
   ['definite', { kind: 'cholesky', pivoting: 'none' }],
@@ -126,7 +126,8 @@ describe.each([false, true])('factors in single precision, complex: %s', (comple
     const factor = factorizeFronts(a, tree, rows, { ...options, precision: 'single' });
     expect(factor.factors.chunks.every((c) => c instanceof Float32Array)).toBe(true);
     const question = { kind: options.kind, complex, entries: a.rowIndex.length, single: true };
-    if (factor.report.counts.delayed === 0) expect(factor.report.peakBytes).toBe(predictPeakBytes(tree, question).total);
+    if (factor.report.counts.delayed === 0)
+      expect(factor.report.peakBytes).toBe(predictPeakBytes(tree, question).total);
     const b = randomVector(width * n * 2, 9);
     for (const isTransposed of [false, true]) {
       const x = b.slice();
