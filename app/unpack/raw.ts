@@ -27,15 +27,19 @@ export function blobFile(name: string, blob: Blob): RawFile {
   };
 }
 
-/** Chunks of a stream; leaving the loop early cancels it. */
+/** Chunks of a stream, the next one asked for while the last is worked on; leaving the loop early cancels it. */
 export async function* chunksOf(
   stream: ReadableStream<Uint8Array<ArrayBuffer>>,
 ): AsyncGenerator<Uint8Array<ArrayBuffer>> {
   const reader = stream.getReader();
+  let next = reader.read();
   try {
     for (;;) {
-      const { done, value } = await reader.read();
+      const { done, value } = await next;
       if (done) return;
+      next = reader.read();
+      // a failure of the chunk ahead is met when its turn comes, and is nobody's business if the loop is left before
+      next.catch(() => {});
       if (value.length > 0) yield value;
     }
   } finally {

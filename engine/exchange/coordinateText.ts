@@ -75,7 +75,7 @@ class TextReader {
       /^%{1,2}matrixmarket\s+matrix\s+coordinate\s+(real|integer|complex|pattern)\s+(general|symmetric|skew-symmetric|hermitian)/i.exec(
         trimmed,
       );
-    if (banner !== null) {
+    if (banner !== null && this.store === null && this.first === null) {
       this.field = banner[1].toLowerCase() as Field;
       this.symmetry = banner[2].toLowerCase() as Symmetry;
       return;

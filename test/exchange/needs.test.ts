@@ -96,6 +96,10 @@ describe('missing banner or size', () => {
       [0, 0, 1],
     ]);
   });
+  it('needs 8: a banner behind the entries is a comment and changes nothing', async () => {
+    const loaded = await load(`2 1\n${head('complex')}`, ['read-as-coordinate-text']);
+    expect([loaded.matrix.field, loaded.matrix.values]).toEqual(['pattern', null]);
+  });
   it('needs 13: size line with 2 or 4 numbers or a word', async () => {
     for (const size of ['2 2', '2 2 2 2', '2 x 2', '2 2 -1', '2.5 2 2']) {
       expect((await faultOf(`${head()}${size}\n1 1 1\n`)).message).toMatch(
