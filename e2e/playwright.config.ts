@@ -15,7 +15,7 @@ const port = 4173;
 export default defineConfig({
   testDir: '.',
   testMatch: '*.spec.ts',
-  outputDir: '../test-results',
+  outputDir: 'results/traces',
   timeout: 120_000,
   expect: { timeout: 15_000 },
   workers: 1,

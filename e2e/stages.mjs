@@ -17,6 +17,13 @@ export const stages = {
     await page.getByRole('tab', { name: 'Comparison' }).click();
     await page.waitForTimeout(200);
   },
+  async forecast(page) {
+    await stages.trials(page);
+    await page.getByRole('button', { name: /^D, / }).click();
+    await page.getByRole('tab', { name: 'Forecast' }).click();
+    await page.getByText('Memory, by layout').waitFor();
+    await page.getByText('More workers').scrollIntoViewIfNeeded();
+  },
   async proof(page) {
     await stages.trials(page);
     await page.getByRole('button', { name: /^C, / }).click();

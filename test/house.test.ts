@@ -154,4 +154,9 @@ describe('the house', () => {
 });
 
 /** Engine files that are plain words and constants, safe to load on the page's own thread. */
-const vocabularies = new Set(['engine/trial/choice.ts', 'engine/matrix/fault.ts', 'engine/matrix/progress.ts']);
+const vocabularies = new Set([
+  'engine/trial/choice.ts',
+  'engine/matrix/fault.ts',
+  'engine/matrix/progress.ts',
+  'engine/picture/window.ts',
+]);

@@ -48,7 +48,9 @@ function ensureChromium() {
     if (findChromium()) return true;
   }
   if (run('npx', ['playwright', 'install', 'chromium'])) return true;
-  console.error('No Chromium found and none could be installed. Install the package "chromium" and run npm test again.');
+  console.error(
+    'No Chromium found and none could be installed. Install the package "chromium" and run npm test again.',
+  );
   return false;
 }
 
@@ -94,7 +96,13 @@ function main() {
 
   const unitReport = join(cache, 'unit.json');
   rmSync(unitReport, { force: true });
-  const unitOk = run('npx', ['vitest', 'run', '--reporter=default', '--reporter=json', `--outputFile.json=${unitReport}`]);
+  const unitOk = run('npx', [
+    'vitest',
+    'run',
+    '--reporter=default',
+    '--reporter=json',
+    `--outputFile.json=${unitReport}`,
+  ]);
   count('unit and reference tests', unitOk, unitCounts(readJson(unitReport)));
 
   if (!step('build', run('npm', ['run', '-s', 'build']))) return;
@@ -106,5 +114,7 @@ function main() {
 }
 
 main();
-console.log(skipped > 0 ? `\n${passed} passed, ${failed} failed, ${skipped} skipped` : `\n${passed} passed, ${failed} failed`);
+console.log(
+  skipped > 0 ? `\n${passed} passed, ${failed} failed, ${skipped} skipped` : `\n${passed} passed, ${failed} failed`,
+);
 process.exitCode = failed > 0 || passed === 0 ? 1 : 0;

@@ -1,6 +1,7 @@
 import { useEffect } from 'react';
 import { useStore } from 'zustand';
 import { DropTarget } from '../intake/DropTarget.tsx';
+import { followTarget } from '../state/forecasts.ts';
 import { followTheme, settingsStore } from '../state/settings.ts';
 import { currentSheet, sheetsStore } from '../state/sheets.ts';
 import { pool } from '../state/vault.ts';
@@ -15,6 +16,7 @@ export function App() {
   const share = useStore(settingsStore, (s) => s.ledgerShare);
   const sheet = useStore(sheetsStore, currentSheet);
   useEffect(followTheme, []);
+  useEffect(followTarget, []);
   useEffect(() => pool.warm(), []);
   useEffect(() => {
     document.title = sheet === null ? 'Fillcast' : `${sheet.name} – Fillcast`;

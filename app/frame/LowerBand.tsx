@@ -1,4 +1,5 @@
 import { useStore } from 'zustand';
+import { ForecastPanel } from '../forecast/ForecastPanel.tsx';
 import { HandoverPanel } from '../handover/HandoverPanel.tsx';
 import { ImportPanel } from '../intake/ImportPanel.tsx';
 import { Plates } from '../intake/Plates.tsx';
@@ -13,6 +14,7 @@ import { useWide } from './useWide.ts';
 
 const panels: readonly { name: PanelName; label: string }[] = [
   { name: 'survey', label: 'Survey' },
+  { name: 'forecast', label: 'Forecast' },
   { name: 'proof', label: 'Proof' },
   { name: 'handover', label: 'Handover' },
   { name: 'import', label: 'Import' },
@@ -23,6 +25,8 @@ function Panel({ name, sheet }: { name: PanelName; sheet: Sheet }) {
   switch (name) {
     case 'import':
       return <ImportPanel sheet={sheet} />;
+    case 'forecast':
+      return <ForecastPanel sheet={sheet} />;
     case 'handover':
       return <HandoverPanel sheet={sheet} />;
     case 'proof':

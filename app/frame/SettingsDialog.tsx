@@ -1,15 +1,9 @@
 import { type RefObject, useEffect, useState } from 'react';
 import { useStore } from 'zustand';
 import { offlineStore } from '../offline/register.ts';
-import {
-  eraseSettings,
-  setSettings,
-  settingsStore,
-  type Target,
-  type Theme,
-  type Workload,
-} from '../state/settings.ts';
+import { eraseSettings, setSettings, settingsStore, type Theme } from '../state/settings.ts';
 import { canShare } from '../workers/shared.ts';
+import type { Target, Workload } from '../workers/target.ts';
 
 const gibibyte = 2 ** 30;
 
@@ -77,11 +71,18 @@ export function SettingsDialog({ ref }: { ref: RefObject<HTMLDialogElement | nul
             onSet={(x) => setTarget({ memoryBytes: Math.round(x * gibibyte) })}
           />
           <Quantity
-            label="dense kernels, one core"
+            label="one core, large dense fronts"
             unit="10⁹ operations/s"
             least={0.001}
-            value={target.operationRate / 1e9}
-            onSet={(x) => setTarget({ operationRate: x * 1e9 })}
+            value={target.largeRate / 1e9}
+            onSet={(x) => setTarget({ largeRate: x * 1e9 })}
+          />
+          <Quantity
+            label="one core, small fronts"
+            unit="10⁹ operations/s"
+            least={0.001}
+            value={target.smallRate / 1e9}
+            onSet={(x) => setTarget({ smallRate: x * 1e9 })}
           />
           <Quantity
             label="memory bandwidth"
@@ -135,6 +136,13 @@ export function SettingsDialog({ ref }: { ref: RefObject<HTMLDialogElement | nul
             least={0}
             value={workload.rightHandSides}
             onSet={(x) => setWorkload({ rightHandSides: Math.max(0, Math.round(x)) })}
+          />
+          <Quantity
+            label="refinement steps for each"
+            unit=""
+            least={0}
+            value={workload.refinementSteps}
+            onSet={(x) => setWorkload({ refinementSteps: Math.max(0, Math.round(x)) })}
           />
         </div>
       </fieldset>

@@ -75,7 +75,7 @@ export function TopLine() {
             {asText(bytes(target.memoryBytes))}
             <span className="wide-only">
               {' '}
-              · {asText(rate(target.operationRate))} · {target.cores} {target.cores === 1 ? 'core' : 'cores'}
+              · {asText(rate(target.largeRate))} · {target.cores} {target.cores === 1 ? 'core' : 'cores'}
             </span>
           </span>
         </button>

@@ -4,18 +4,7 @@ import { changeSheet, type Sheet, type SheetId, sheetById } from './sheets.ts';
 import { follow, stopTask } from './tasks.ts';
 import type { ProofState, TrialId } from './trial.ts';
 import { addTrials, whenDone } from './trials.ts';
-import { keepSolutions, pool, resultOf } from './vault.ts';
-
-/** Share of the machine's memory that a proof run may take in this page. */
-const memoryShare = 0.75;
-/** Assumed where the browser does not say, GiB. */
-const usualMemory = 8;
-
-/** Bytes that a numeric run may take here: by what the browser says of the machine, which is at most 8 GiB. */
-export function pageMemory(): number {
-  const { deviceMemory } = navigator as Navigator & { readonly deviceMemory?: number };
-  return memoryShare * (deviceMemory ?? usualMemory) * 2 ** 30;
-}
+import { keepSolutions, pageMemory, pool, resultOf } from './vault.ts';
 
 /** Runs the numeric factorization of a finished trial and keeps what it showed. */
 export function startProof(id: SheetId, trialId: TrialId, refine: number): void {

@@ -1,28 +1,6 @@
 import { persist } from 'zustand/middleware';
 import { createStore } from 'zustand/vanilla';
-
-/** The machine the engineer will really run on. */
-export interface Target {
-  /** memory one factorization may take, bytes */
-  readonly memoryBytes: number;
-  /** sustained rate of dense kernels on one core, operations per second */
-  readonly operationRate: number;
-  /** memory bandwidth, bytes per second */
-  readonly bandwidth: number;
-  readonly cores: number;
-  /** width of an index in the target code, bytes */
-  readonly indexBytes: 4 | 8;
-  /** width of a real scalar in the target code, bytes */
-  readonly scalarBytes: 4 | 8;
-}
-
-/** How the factorization will be used. */
-export interface Workload {
-  /** factorizations with this pattern */
-  readonly factorizations: number;
-  /** right-hand sides for each factorization */
-  readonly rightHandSides: number;
-}
+import { defaultTarget, defaultWorkload, type Target, type Workload } from '../workers/target.ts';
 
 export type Theme = 'system' | 'light' | 'dark';
 
@@ -38,15 +16,8 @@ export interface Settings {
 }
 
 export const defaultSettings: Settings = {
-  target: {
-    memoryBytes: 16 * 2 ** 30,
-    operationRate: 1e10,
-    bandwidth: 2e10,
-    cores: 4,
-    indexBytes: 4,
-    scalarBytes: 8,
-  },
-  workload: { factorizations: 1, rightHandSides: 1 },
+  target: defaultTarget,
+  workload: defaultWorkload,
   theme: 'system',
   columns: [],
   ledgerShare: 0.46,

@@ -1,3 +1,4 @@
+import type { TrialForecast } from '../../engine/forecast/forecast.ts';
 import type { Choice } from '../../engine/trial/choice.ts';
 import type { Proof } from '../../engine/trial/proof.ts';
 import type { Failure } from '../workers/protocol.ts';
@@ -33,6 +34,8 @@ export interface Trial {
   readonly fraction: number;
   readonly phase: string;
   readonly failure: Failure | null;
+  /** storage, time and parallelism on the target in force; null until reckoned, or where counts are missing */
+  readonly forecast: TrialForecast | null;
   readonly proof: ProofState;
   /** counts and seconds once finished */
   readonly outcome: TrialOutcome | null;

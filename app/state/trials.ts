@@ -1,5 +1,6 @@
 import type { Choice } from '../../engine/trial/choice.ts';
 import { advisedFactorization, defaultChoice, suitableOrderings } from '../workers/rules.ts';
+import { startForecast } from './forecasts.ts';
 import { notify, say } from './notices.ts';
 import { changeSheet, type Sheet, type SheetId, sheetById, sheetsStore } from './sheets.ts';
 import { follow, stopTask } from './tasks.ts';
@@ -63,6 +64,7 @@ export function addTrials(id: SheetId, plans: readonly TrialPlan[], undoable = t
       phase: '',
       failure: null,
       outcome: null,
+      forecast: null,
       proof: noProof,
     });
   }
@@ -115,6 +117,7 @@ export function startTrial(id: SheetId, trialId: TrialId): void {
     if (reply.ok) {
       keepResult(trialId, reply.value.result);
       changeTrial(id, trialId, { state: 'done', fraction: 1, outcome: reply.value.outcome });
+      startForecast(id, trialId);
       say(`Trial ${trial.letter} is ready.`);
       showFirst(id, trialId);
       return;

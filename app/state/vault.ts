@@ -74,3 +74,14 @@ export function dropResults(ids: readonly TrialId[]): void {
     solved.delete(id);
   }
 }
+
+/** Share of the machine's memory that a proof run may take in this page. */
+const memoryShare = 0.75;
+/** Assumed where the browser does not say, GiB. */
+const usualMemory = 8;
+
+/** Bytes that a numeric run may take here: by what the browser says of the machine, which is at most 8 GiB. */
+export function pageMemory(): number {
+  const { deviceMemory } = navigator as Navigator & { readonly deviceMemory?: number };
+  return memoryShare * (deviceMemory ?? usualMemory) * 2 ** 30;
+}

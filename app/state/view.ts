@@ -1,7 +1,7 @@
 import { createStore } from 'zustand/vanilla';
 
 /** Panels beside the ledger. `trials` is one of them only where the page is narrow. */
-export type PanelName = 'trials' | 'survey' | 'import' | 'proof' | 'handover';
+export type PanelName = 'trials' | 'survey' | 'forecast' | 'import' | 'proof' | 'handover';
 
 /** What lies on the sheet. */
 export type SheetView = 'maps' | 'comparison';

@@ -1,9 +1,11 @@
 import { useStore } from 'zustand';
+import { BreakEven } from '../forecast/BreakEven.tsx';
 import { Bars } from '../plot/Bars.tsx';
 import { settingsStore } from '../state/settings.ts';
 import type { Sheet } from '../state/sheets.ts';
 import type { FigureName } from '../workers/trialFigures.ts';
 import { columns } from './columns.ts';
+import { costsOf } from './costs.ts';
 import { sayChoice } from './explain.ts';
 import { useFigures } from './useFigures.ts';
 
@@ -11,17 +13,19 @@ import { useFigures } from './useFigures.ts';
 const compared: readonly FigureName[] = [
   'factorEntries',
   'operations',
-  'factorBytes',
+  'peakBytes',
   'largestFront',
-  'treeHeight',
-  'orderingSeconds',
+  'factorSeconds',
+  'totalSeconds',
 ];
 
 /** The trials side by side, figure by figure. */
 export function Comparison({ sheet }: { sheet: Sheet }) {
   const figures = useFigures(sheet);
-  const limit = useStore(settingsStore, (s) => s.target.memoryBytes);
+  const { target, workload } = useStore(settingsStore);
+  const limit = target.memoryBytes;
   const trials = sheet.trials.filter((t) => figures.has(t.id));
+  const costs = costsOf(trials, target.cores);
   if (trials.length === 0) return <p className="soft">No trial is finished yet.</p>;
   return (
     <div className="comparison">
@@ -48,6 +52,7 @@ export function Comparison({ sheet }: { sheet: Sheet }) {
           />
         );
       })}
+      {costs.length < 2 ? null : <BreakEven costs={costs} workload={workload} />}
     </div>
   );
 }

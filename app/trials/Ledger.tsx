@@ -22,8 +22,9 @@ export interface Reading {
 
 /** The ledger: one line a trial, figures in columns, and under it the exact reading of the figure in hand. */
 export function Ledger({ sheet }: { sheet: Sheet }) {
-  const names = useStore(settingsStore, (s) => s.columns);
-  const limit = useStore(settingsStore, (s) => s.target.memoryBytes);
+  const settings = useStore(settingsStore);
+  const { columns: names } = settings;
+  const limit = settings.target.memoryBytes;
   const [order, setOrder] = useState<Order>({ by: null, falling: false });
   const [reading, setReading] = useState<Reading | null>(null);
   const columns = useMemo(() => chosenColumns(names), [names]);
@@ -34,7 +35,7 @@ export function Ledger({ sheet }: { sheet: Sheet }) {
   return (
     <div className="ledger">
       <LedgerTools sheet={sheet} columns={columns} trials={trials} figures={figures} />
-      {sheet.facts === null ? null : <AdviceLine advice={adviceOn(sheet.facts, sheet.trials, figures, limit)} />}
+      {sheet.facts === null ? null : <AdviceLine advice={adviceOn(sheet.facts, sheet.trials, figures, settings)} />}
       <div className="ledger-scroll">
         {/* biome-ignore lint/a11y/noNoninteractiveElementToInteractiveRole: a table whose cells take the focus is a grid */}
         <table role="grid" aria-label="Trials" className="ledger-table" onKeyDown={keys.onKeyDown}>

@@ -1,6 +1,9 @@
 import { asText, bytes } from '../figures/format.ts';
+import type { Settings } from '../state/settings.ts';
 import type { Trial } from '../state/trial.ts';
 import { advisedFactorization, type MatrixFacts } from '../workers/rules.ts';
+import { compareWorkload } from '../workers/workload.ts';
+import { costsOf } from './costs.ts';
 import { factorizations, orderings } from './explain.ts';
 import type { Figures } from './order.ts';
 
@@ -10,26 +13,33 @@ export interface Advice {
   readonly cautions: readonly string[];
 }
 
-export function adviceOn(facts: MatrixFacts, trials: readonly Trial[], figures: Figures, memoryBytes: number): Advice {
+export function adviceOn(
+  facts: MatrixFacts,
+  trials: readonly Trial[],
+  figures: Figures,
+  { target, workload }: Settings,
+): Advice {
+  const { memoryBytes } = target;
   const { factorization, reason } = advisedFactorization(facts);
   const sentences = [`Advised: ${factorizations[factorization].name}, because ${reason}.`];
   const done = trials.filter((t) => figures.has(t.id));
-  const value = (t: Trial, name: 'factorEntries' | 'factorBytes' | 'operations') =>
-    figures.get(t.id)?.[name].value ?? null;
+  const value = (t: Trial, name: 'factorEntries' | 'peakBytes') => figures.get(t.id)?.[name].value ?? null;
   const best = least(done, (t) => value(t, 'factorEntries'));
   if (best !== null && done.length > 1) {
-    const need = value(best, 'factorBytes');
+    const need = value(best, 'peakBytes');
     const name = `${best.letter}, ${orderings[best.choice.ordering].name}`;
     if (need !== null) {
       const fits = need <= memoryBytes ? 'It fits.' : 'It does not fit.';
       sentences.push(
-        `Least fill: ${name}, with factors of ${asText(bytes(need))}; your limit is ${asText(bytes(memoryBytes))}. ${fits}`,
+        `Least fill: ${name}, needs ${asText(bytes(need))} at its peak; your limit is ${asText(bytes(memoryBytes))}. ${fits}`,
       );
     }
-    const fewest = least(done, (t) => value(t, 'operations'));
-    if (fewest !== null && fewest.id !== best.id) {
-      sentences.push(`Least fill is not least work here: ${fewest.letter} takes fewer operations.`);
-    }
+    const { remark, breakEvens } = compareWorkload(costsOf(done, target.cores), workload);
+    if (remark !== null) sentences.push(remark);
+    const next = breakEvens.find(
+      (e) => e.better === best.letter && e.by === 'factorizations' && e.from > workload.factorizations,
+    );
+    if (next !== undefined) sentences.push(next.sentence);
   }
   const cautions: string[] = [];
   if (done.some((t) => t.choice.pivoting === 'threshold')) {

@@ -32,13 +32,19 @@ export const columns: readonly Column[] = [
   column('fillIn', 'fill-in', 'fill-in', write.count),
   column('fillRatio', 'fill ratio', 'fill ratio', write.times, true),
   column('operations', 'operations', 'operations', write.count, true),
-  column('factorBytes', 'factors', 'factor bytes', write.bytes, true, 'least', true),
+  column('factorBytes', 'factors', 'factor bytes', write.bytes, false, 'least', true),
+  column('peakBytes', 'peak memory', 'peak bytes', write.bytes, true, 'least', true),
   column('largestFront', 'largest front', 'largest front', write.count, true),
-  column('treeHeight', 'tree height', 'tree height', write.count, true),
+  column('treeHeight', 'tree height', 'tree height', write.count),
   column('bandwidth', 'bandwidth', 'bandwidth', write.count),
   column('envelope', 'envelope', 'envelope', write.count),
   column('orderingSeconds', 'ordering', 'ordering time', write.seconds, true),
   column('symbolicSeconds', 'analysis', 'ordering time', write.seconds),
+  column('factorSeconds', 'factorization', 'forecast time', write.seconds, true),
+  column('totalSeconds', 'whole workload', 'total time', write.seconds, true),
+  column('mostSpeedup', 'at most faster', 'at most faster', write.times, false, 'most'),
+  column('provenSeconds', 'proven time', 'proof', write.seconds),
+  column('backwardError', 'backward error', 'backward error', write.plainNumber),
 ];
 
 /** The columns a user has chosen, or the usual ones. */

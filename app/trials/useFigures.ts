@@ -7,14 +7,16 @@ import type { Figures } from './order.ts';
 
 /** The figures of the finished trials of a sheet, for the target in force. */
 export function useFigures({ trials, facts }: Sheet): Figures {
-  const target = useStore(settingsStore, (s) => s.target);
+  const { target, workload } = useStore(settingsStore);
   return useMemo(
     () =>
       new Map(
-        trials.flatMap(({ id, choice, outcome }) =>
-          outcome === null || facts === null ? [] : [[id, figuresOf(outcome, choice, facts, target)] as const],
+        trials.flatMap(({ id, choice, outcome, forecast, proof }) =>
+          outcome === null || facts === null
+            ? []
+            : [[id, figuresOf(outcome, choice, facts, target, workload, forecast, proof.proof)] as const],
         ),
       ),
-    [trials, facts, target],
+    [trials, facts, target, workload],
   );
 }

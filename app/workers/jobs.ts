@@ -1,7 +1,9 @@
 import type { Progress } from '../../engine/matrix/progress.ts';
 import { attach, inspect } from './attachJobs.ts';
 import { example, plates } from './exampleJobs.ts';
+import { forecast } from './forecastJobs.ts';
 import { convention, permutation } from './handoverJobs.ts';
+import { layMap, map, spot, whyFill } from './mapJobs.ts';
 import { density } from './pictureJobs.ts';
 import { prove } from './proofJobs.ts';
 import type { Answer, Ask, Early, Operation } from './protocol.ts';
@@ -29,7 +31,12 @@ export const jobs: { readonly [K in Operation]: Job<K> } = {
   example,
   survey,
   density,
+  layMap,
+  map,
+  spot,
+  whyFill,
   trial,
+  forecast,
   prove,
   permutation,
   convention,

@@ -1,5 +1,7 @@
 import type { Recognised } from '../../engine/exchange/recognise.ts';
 import type { Direction, PermutationFormat } from '../../engine/exchange/writePermutation.ts';
+import type { TrialForecast } from '../../engine/forecast/forecast.ts';
+import type { Target } from '../../engine/forecast/target.ts';
 import type { NewToOld } from '../../engine/matrix/permutation.ts';
 import type { DensityMap } from '../../engine/picture/window.ts';
 import type { Survey } from '../../engine/survey/survey.ts';
@@ -7,6 +9,7 @@ import type { Choice } from '../../engine/trial/choice.ts';
 import type { Proof } from '../../engine/trial/proof.ts';
 import type { TrialResult } from '../../engine/trial/result.ts';
 import type { MatrixFacts } from '../../engine/trial/rules.ts';
+import type { MapOperations } from './mapOperations.ts';
 import type { MatrixKey } from './protocol.ts';
 import type { Stock } from './stock.ts';
 import type { ImportSummary } from './summary.ts';
@@ -52,7 +55,7 @@ export type Attached =
   | { readonly kind: 'which-direction'; readonly factorEntries: Readonly<Record<Direction, number | null>> };
 
 /** Every operation of a worker: what it asks, what it answers, what it can say early. */
-export interface Operations {
+export interface Operations extends MapOperations {
   /** the worked examples, drawn from their smallest size */
   plates: { ask: { cells: number }; answer: readonly Plate[]; early: Plate };
   /** a matrix from a file, with the repairs that were chosen */
@@ -89,6 +92,18 @@ export interface Operations {
   convention: {
     ask: { order: NewToOld; direction: Direction; base: 0 | 1 };
     answer: { formula: string; example: readonly string[]; selfInverse: boolean };
+    early: never;
+  };
+  /** what a finished trial costs on a target (bytes a proof in this page may take); null where counts are missing */
+  forecast: {
+    ask: {
+      key: MatrixKey;
+      result: TrialResult;
+      heldLast: Int32Array;
+      target: Target;
+      pageMemoryBytes: number;
+    };
+    answer: TrialForecast | null;
     early: never;
   };
 }

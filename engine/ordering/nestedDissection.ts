@@ -14,7 +14,10 @@ import type { OrderingOptions, OrderingResult } from './ordering.ts';
 
 /** Options of nested dissection. */
 export interface NestedDissectionOptions extends OrderingOptions {
-  /** pieces of at most so many vertices (indistinguishable unknowns merged) are ordered by minimum degree; default 200, at least 1 */
+  /**
+   * pieces of at most so many vertices (indistinguishable unknowns merged) are ordered by minimum degree; at least 1.
+   * Default 200, less where vertices have more than 8 neighbours on average, down to 80: minimum degree is weak on dense pieces.
+   */
   readonly leafSize?: number;
   /** most share of both sides of a separator that one of them may have; default 0.7, from 0.5 to 0.9 */
   readonly balance?: number;
@@ -39,7 +42,7 @@ export function nestedDissection(
   options: NestedDissectionOptions,
   progress: Progress,
 ): OrderingResult {
-  const settings = settingsOf(options);
+  checkOptions(options);
   progress(0, 'graph');
   const g = graphOf(pattern);
   const n = g.order;
@@ -50,6 +53,7 @@ export function nestedDissection(
   if (held !== null) for (let i = 0; i < n; i++) if (held[i] === 1) state[i] = HELD;
   for (let k = 0; k < dense.length; k++) state[dense[k]] = ASIDE;
   const whole = makeWholeGraph(g, state);
+  const settings = settingsOf(options, whole);
   progress(0, 'dissection');
   let { order, separators } = dissect(
     whole,
@@ -69,8 +73,7 @@ export function nestedDissection(
   return expandToUnknowns(whole, order, separators, dense, options.heldLast ?? new Int32Array(0), notes);
 }
 
-function settingsOf(options: NestedDissectionOptions): DissectionSettings {
-  const { leafSize = 200, balance = 0.7, tries = 2, runs = 4, seed = 1 } = options;
+function checkOptions({ leafSize = 1, balance = 0.5, tries = 1, runs = 1, seed = 1 }: NestedDissectionOptions): void {
   const refuse = (name: string, value: number, range: string): never => {
     throw new Fault('input', 'nested-dissection-option', `${name} is ${value}; it must be ${range}.`);
   };
@@ -79,6 +82,12 @@ function settingsOf(options: NestedDissectionOptions): DissectionSettings {
   if (!(Number.isInteger(tries) && tries >= 1 && tries <= 1000)) refuse('Number of tries', tries, 'between 1 and 1000');
   if (!(Number.isInteger(runs) && runs >= 1 && runs <= 1000)) refuse('Number of runs', runs, 'between 1 and 1000');
   if (!Number.isInteger(seed)) refuse('Seed', seed, 'a whole number');
+}
+
+function settingsOf(options: NestedDissectionOptions, whole: WholeGraph): DissectionSettings {
+  const { balance = 0.7, tries = 2, runs = 4, seed = 1 } = options;
+  const degree = Math.max(8, whole.neighbour.length / Math.max(1, whole.freeOrder));
+  const leafSize = options.leafSize ?? Math.max(80, Math.floor(1600 / degree));
   return { leafSize, balance, tries, runs, seed };
 }
 

@@ -63,7 +63,7 @@ export function grow(
       reach1[u] = r;
       heap0.push(u, weightOfU - r);
     }
-    const cost = separationCost(size0, totalWeight - size0 - separator, separator, balance);
+    const cost = separationCost(size0, totalWeight - size0 - separator, separator, balance, w.evenness);
     if (cost < best) {
       best = cost;
       bestMoves = moves;

@@ -46,7 +46,7 @@ export function growByDistance(
       separator += weight[u];
       queue[tail++] = u;
     }
-    const cost = separationCost(size0, totalWeight - size0 - separator, separator, balance);
+    const cost = separationCost(size0, totalWeight - size0 - separator, separator, balance, w.evenness);
     if (cost < best) {
       best = cost;
       bestHead = head;

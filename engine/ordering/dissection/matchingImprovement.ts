@@ -18,7 +18,7 @@ export function improveByMatching(
   arena: IntegerArena,
 ): number {
   const { sizes } = w;
-  let cost = separationCost(sizes[0], sizes[1], sizes[2], balance);
+  let cost = separationCost(sizes[0], sizes[1], sizes[2], balance, w.evenness);
   let idle = 0;
   // a side that gave nothing is tried again only after the other one gave something
   for (let round = 0; idle < 2 && round < MOST_ROUNDS; round++) {
@@ -73,7 +73,7 @@ function improveToward(
   for (let c = 0; c < b.columns; c++) if (reached[b.rows + c] !== 0) into += weight[b.columnVertex[c]];
   const size0 = sizes[0] + (side === 0 ? -into : out);
   const size1 = sizes[1] + (side === 0 ? out : -into);
-  const newCost = separationCost(size0, size1, sizes[2] + into - out, balance);
+  const newCost = separationCost(size0, size1, sizes[2] + into - out, balance, w.evenness);
   if (!(newCost < cost)) return cost;
   let count = 0;
   for (let r = 0; r < b.rows; r++) {

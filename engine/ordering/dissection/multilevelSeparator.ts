@@ -6,7 +6,7 @@ import { growByDistance } from './growByDistance.ts';
 import { matchInto } from './matching.ts';
 import { improveByMatching } from './matchingImprovement.ts';
 import { refine } from './refine.ts';
-import { SEPARATOR, type SeparationWorkspace } from './separation.ts';
+import { evennessFor, SEPARATOR, type SeparationWorkspace } from './separation.ts';
 import type { WeightedGraph } from './weightedGraph.ts';
 
 /**
@@ -51,6 +51,17 @@ export function findSeparator(
   const { arena, workspace: w } = tools;
   const n = g.order;
   const mark = arena.mark();
+  // level structures from the last and the first vertex, which the numbering puts far apart
+  const byDistance = arena.take(2 * n);
+  const starts = [n - 1, 0];
+  w.evenness = 1;
+  let separator = Number.POSITIVE_INFINITY;
+  for (let end = 0; end < 2; end++) {
+    const trial = byDistance.subarray(end * n, end * n + n);
+    starts[end] = growByDistance(g, trial, w, starts[end], settings.balance);
+    if (w.sizes[2] < separator) separator = w.sizes[2];
+  }
+  w.evenness = evennessFor(separator, g.totalWeight);
   const carried = carriedAt(n, n, settings.runs);
   const parts = arena.take(carried * n);
   const costs = new Float64Array(carried);
@@ -58,10 +69,10 @@ export function findSeparator(
   const best = cheapest(costs);
   let cost = costs[best];
   part.set(parts.subarray(best * n, best * n + n));
-  const trial = parts.subarray(0, n);
-  for (let end = 0; end < ENDS; end++) {
-    const start = growByDistance(g, trial, w, end === 0 ? n - 1 : 0, settings.balance);
-    if (start > HOPELESS * cost) continue;
+  for (let end = 0; end < 2; end++) {
+    if (starts[end] > HOPELESS * cost) continue;
+    const trial = byDistance.subarray(end * n, end * n + n);
+    w.measure(g, trial);
     const reached = improve(g, trial, settings, tools);
     if (reached < cost) {
       cost = reached;
@@ -73,8 +84,6 @@ export function findSeparator(
   return cost;
 }
 
-/** Level structures tried on the finest level: from its last and its first vertex, which the numbering puts far apart. */
-const ENDS = 2;
 /** A level structure is not improved when it starts at more than so many times the best cost. */
 const HOPELESS = 1.5;
 

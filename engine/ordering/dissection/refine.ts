@@ -19,7 +19,7 @@ export function refine(
   patience: number,
 ): number {
   const { sizes } = w;
-  let best = separationCost(sizes[0], sizes[1], sizes[2], balance);
+  let best = separationCost(sizes[0], sizes[1], sizes[2], balance, w.evenness);
   for (let pass = 0; pass < passes; pass++) {
     const before = best;
     prepareGains(g, part, w);
@@ -130,7 +130,7 @@ function climb(
     log[logged] = logged - firstPull;
     log[logged + 1] = 2 * v + t;
     logged += 2;
-    const cost = separationCost(sizes[0], sizes[1], sizes[2], balance);
+    const cost = separationCost(sizes[0], sizes[1], sizes[2], balance, w.evenness);
     if (cost < best) {
       best = cost;
       bestLogged = logged;

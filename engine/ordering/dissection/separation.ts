@@ -13,6 +13,8 @@ export class SeparationWorkspace {
   /** vertices of the separator in hand, in places 0 … count − 1 */
   readonly list: Int32Array;
   count = 0;
+  /** what unevenness counts in the graph in hand */
+  evenness = 0.3;
   /** separator vertex -> weight of its neighbours in side 0 and in side 1; undefined for others */
   readonly reach0: Int32Array;
   readonly reach1: Int32Array;
@@ -54,21 +56,35 @@ export class SeparationWorkspace {
 
 /**
  * What a separation costs: the separator's weight, more when the sides are uneven (as the evaluator of Ashcraft & Liu
- * 1998, with another form of the balance term), far more when a side has more than the share `balance` of the two. Smaller is better.
+ * 1998, with another form of the balance term), far more when a side has more than the share `balance` of the two.
+ * Smaller is better. `evenness`: what unevenness counts, see `evennessFor`.
  */
-export function separationCost(size0: number, size1: number, separator: number, balance: number): number {
+export function separationCost(
+  size0: number,
+  size1: number,
+  separator: number,
+  balance: number,
+  evenness: number,
+): number {
   const larger = size0 > size1 ? size0 : size1;
   const smaller = size0 > size1 ? size1 : size0;
   const total = larger + smaller;
   if (total === 0) return separator;
   const uneven = (larger - smaller) / total;
-  let cost = separator * (1 + UNEVEN_WEIGHT * uneven * uneven) + 0.01 * uneven;
+  let cost = separator * (1 + evenness * uneven * uneven) + 0.01 * uneven;
   if (larger > balance * total) cost += 2 * (larger - balance * total);
   return cost;
 }
 
-/** A split of 60 to 40 counts as much as a separator larger by 1.2 %. */
-const UNEVEN_WEIGHT = 0.3;
+/**
+ * The weight of unevenness in a graph whose separators weigh about `separator`: 0.3 where they weigh √total, as in the
+ * plane (a split of 60 to 40 counts as a separator larger by 1.2 %), up to 1 where they are heavier, as in space,
+ * because then the separators inside the larger side are dear.
+ */
+export function evennessFor(separator: number, total: number): number {
+  if (total === 0) return 0.3;
+  return Math.max(0.3, Math.min(1, (0.3 * separator) / Math.sqrt(total)));
+}
 
 /** Names the first edge between the two sides, the first value that is no part, or returns null: the separator separates. */
 export function separationFlaw(g: WeightedGraph, part: ArrayLike<number>): string | null {

@@ -31,15 +31,17 @@ function compiledRead(program: string, file: string): Promise<{ parseSeconds: nu
   return new Promise((resolve, reject) => {
     const child = spawn('stdbuf', ['-oL', program, file], { stdio: ['ignore', 'pipe', 'inherit'] });
     let text = '';
+    let found: string | undefined;
     child.stdout.on('data', (data) => {
       text += String(data);
-      const line = text.split('\n').find((l) => l.includes('parseSeconds') && l.endsWith('}'));
-      if (line === undefined) return;
-      child.once('close', () => resolve(JSON.parse(line)));
-      child.kill();
+      found = text.split('\n').find((l) => l.includes('parseSeconds') && l.endsWith('}'));
+      if (found !== undefined) child.kill();
     });
     child.once('error', reject);
-    child.once('close', () => reject(new Error(`${program} printed no figures`)));
+    child.once('close', () => {
+      if (found === undefined) reject(new Error(`${program} printed no figures`));
+      else resolve(JSON.parse(found));
+    });
   });
 }
 

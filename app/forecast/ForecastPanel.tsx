@@ -1,0 +1,139 @@
+import type { Figure } from '../../engine/forecast/figure.ts';
+import type { TrialForecast } from '../../engine/forecast/forecast.ts';
+import { asText, bytes, count, seconds, times, type Written } from '../figures/format.ts';
+import type { Sheet } from '../state/sheets.ts';
+import type { Trial } from '../state/trial.ts';
+import { sayChoice } from '../trials/explain.ts';
+import { Parallel } from './Parallel.tsx';
+
+/** One figure with its kind, or why there is none. */
+function Line({ head, figure, write }: { head: string; figure: Figure; write: (x: number) => Written }) {
+  const written = figure.value === null ? null : write(figure.value);
+  return (
+    <tr>
+      <th scope="row">{head}</th>
+      {written === null ? (
+        <td className="soft small">{figure.reason ?? 'not defined'}</td>
+      ) : (
+        <td>
+          <span className="figure" title={written.exact}>
+            {asText(written)}
+          </span>{' '}
+          <span className="kind">{figure.kind}</span>
+        </td>
+      )}
+    </tr>
+  );
+}
+
+function Shown({ forecast }: { forecast: TrialForecast }) {
+  const { limits, storage, time, parallel, delayed } = forecast;
+  return (
+    <>
+      <dl className="limits">
+        {limits.map(({ question, passed, sentence }) => (
+          <div key={question} className={passed ? 'limit' : 'limit limit-bites'}>
+            <dt>{question}</dt>
+            <dd>{sentence}</dd>
+          </div>
+        ))}
+      </dl>
+      <h3>Memory, by layout</h3>
+      <table className="facts-table">
+        <tbody>
+          <Line head="fronts, with their stack" figure={storage.multifrontal} write={bytes} />
+          <Line head="stack alone, at its peak" figure={storage.stack} write={bytes} />
+          <Line head="dense panels" figure={storage.panels} write={bytes} />
+          <Line head="compressed columns" figure={storage.compressedColumns} write={bytes} />
+          <Line head="envelope" figure={storage.envelope} write={bytes} />
+          <Line head="written out as made: least" figure={storage.outOfCore} write={bytes} />
+          <Line head="traffic when written out" figure={storage.traffic} write={bytes} />
+          <Line head="dense matrix" figure={storage.dense} write={bytes} />
+          <Line head="saved by overwriting A" figure={storage.overwriting} write={bytes} />
+        </tbody>
+      </table>
+      <h3>Time on one core of your target</h3>
+      <table className="facts-table">
+        <tbody>
+          <Line head="factorization" figure={time.factorization} write={seconds} />
+          <Line head="solve, one right-hand side" figure={time.solve} write={seconds} />
+          <Line head="one refinement step" figure={time.refinementStep} write={seconds} />
+        </tbody>
+      </table>
+      {parallel === null ? null : (
+        <>
+          <h3>How parallel it is</h3>
+          <Parallel profile={parallel} />
+        </>
+      )}
+      {delayed === null || delayed.length === 0 ? null : (
+        <>
+          <h3>If pivots are delayed</h3>
+          <table className="facts-table against">
+            <thead>
+              <tr>
+                <th scope="col">share delayed</th>
+                <th scope="col">stored entries</th>
+                <th scope="col">operations</th>
+              </tr>
+            </thead>
+            <tbody>
+              {delayed.map((row) => (
+                <tr key={row.share}>
+                  <th scope="row">{asText({ ...times(row.share * 100), unit: '%' })}</th>
+                  <td className="figure">{asText(count(row.storedFactorEntries))}</td>
+                  <td className="figure">{asText(count(row.operations))}</td>
+                </tr>
+              ))}
+            </tbody>
+          </table>
+        </>
+      )}
+    </>
+  );
+}
+
+/** How far interchanges may move the count, where that is known. */
+function Range({ trial }: { trial: Trial }) {
+  const counts = trial.outcome?.counts;
+  if (counts === undefined || counts.range === null) return null;
+  const [least, most] = counts.range.factorEntries;
+  return (
+    <p>
+      Whatever pivots are taken, the factors hold between <span className="figure">{asText(count(least))}</span> and{' '}
+      <span className="figure">{asText(count(most))}</span> entries <span className="kind">bound</span>.
+    </p>
+  );
+}
+
+/** The forecast of the chosen trial for the target in force. */
+export function ForecastPanel({ sheet }: { sheet: Sheet }) {
+  const trial = sheet.trials.find((t) => t.id === sheet.chosen);
+  if (trial === undefined) return <p className="soft">Choose a trial in the ledger by pressing its name.</p>;
+  return (
+    <section className="proof" aria-label="Forecast">
+      <p>
+        <span className="stamp stamp-still">{trial.letter}</span> {sayChoice(trial.choice)}
+      </p>
+      <Range trial={trial} />
+      {trial.outcome?.notes.map((note) => (
+        <p key={note} className="small">
+          {note}
+        </p>
+      ))}
+      {trial.forecast === null ? (
+        <p className="soft">
+          {trial.state === 'done'
+            ? 'No forecast for your target yet, or none that is defined for this matrix.'
+            : 'The trial is not finished.'}
+        </p>
+      ) : (
+        <Shown forecast={trial.forecast} />
+      )}
+      <p className="caution-note small">
+        <strong>Caution.</strong> A forecast is no guarantee once pivots are chosen by size. Seconds are modelled from
+        the rates of your target; compare trials by them, and promise nothing.
+      </p>
+    </section>
+  );
+}

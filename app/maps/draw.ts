@@ -1,0 +1,262 @@
+import { cellStart } from '../../engine/picture/window.ts';
+import type { Ground } from './ground.ts';
+import type { MapCursor } from './mapsStore.ts';
+import type { MapImage } from './paneImages.ts';
+import type { Viewport } from './viewport.ts';
+
+/** Everything a frame of one map is drawn from. */
+export interface Frame {
+  readonly context: CanvasRenderingContext2D;
+  /** device pixels */
+  readonly width: number;
+  readonly height: number;
+  readonly ratio: number;
+  readonly viewport: Viewport;
+  readonly ground: Ground;
+  readonly whole: MapImage | null;
+  readonly close: MapImage | null;
+  /** where the crosshair stands in this pane, positions; null for none */
+  readonly crosshair: { readonly row: number; readonly column: number } | null;
+  readonly separators: boolean;
+  readonly path: Int32Array | null;
+  /** lines to mark, positions */
+  readonly marks: { readonly rows: readonly number[]; readonly columns: readonly number[] };
+  readonly colours: {
+    readonly ink: string;
+    readonly fill: string;
+    readonly separator: string;
+    readonly crosshair: string;
+    readonly paper: string;
+  };
+}
+
+/** least size of a cell, in CSS pixels, at which single entries are drawn as shapes */
+export const shapeFrom = 5;
+
+/** Draws one frame. No allocation that grows with the matrix. */
+export function drawFrame(f: Frame): void {
+  const { context, width, height } = f;
+  context.setTransform(1, 0, 0, 1, 0, 0);
+  context.clearRect(0, 0, width, height);
+  const shapes = shapesOf(f);
+  if (shapes !== null) drawShapes(f, shapes);
+  else {
+    const sharp = f.close !== null && covers(f, f.close);
+    if (f.whole !== null && !sharp) drawImage(f, f.whole);
+    if (f.close !== null && (sharp || f.whole === null)) drawImage(f, f.close);
+  }
+  if (f.separators) drawSeparators(f);
+  drawMarks(f);
+  if (f.path !== null) drawPath(f, f.path);
+  drawCrosshair(f);
+}
+
+/** device pixel of a position's upper or left edge */
+function xOf(f: Frame, column: number): number {
+  return ((column / f.ground.columns - f.viewport.left) / f.viewport.width) * f.width;
+}
+
+function yOf(f: Frame, row: number): number {
+  return ((row / f.ground.rows - f.viewport.top) / f.viewport.height) * f.height;
+}
+
+/** Whether an image shows all that the pane looks at, at its resolution. */
+function covers(f: Frame, image: MapImage): boolean {
+  const { window } = image.counts;
+  const { viewport: v, ground: g } = f;
+  const slack = 1.0001;
+  return (
+    window.rowStart <= v.top * g.rows + slack &&
+    window.rowEnd >= (v.top + v.height) * g.rows - slack &&
+    window.columnStart <= v.left * g.columns + slack &&
+    window.columnEnd >= (v.left + v.width) * g.columns - slack
+  );
+}
+
+function drawImage(f: Frame, image: MapImage): void {
+  const { window } = image.counts;
+  const x = xOf(f, window.columnStart);
+  const y = yOf(f, window.rowStart);
+  f.context.imageSmoothingEnabled = false;
+  f.context.drawImage(image.canvas, x, y, xOf(f, window.columnEnd) - x, yOf(f, window.rowEnd) - y);
+}
+
+/** The image whose cells are single positions, large enough on the screen for shapes. */
+function shapesOf(f: Frame): MapImage | null {
+  for (const image of [f.close, f.whole]) {
+    if (image === null || !covers(f, image)) continue;
+    const { counts } = image;
+    const { window } = counts;
+    const single =
+      counts.rows === window.rowEnd - window.rowStart && counts.columns === window.columnEnd - window.columnStart;
+    const size = f.width / (f.viewport.width * f.ground.columns) / f.ratio;
+    if (single && size >= shapeFrom) return image;
+  }
+  return null;
+}
+
+/** Original entries as filled squares, fill-in as open ones. */
+function drawShapes(f: Frame, image: MapImage): void {
+  const { context, ratio } = f;
+  const { counts } = image;
+  const { window } = counts;
+  const size = f.width / (f.viewport.width * f.ground.columns);
+  const sizeY = f.height / (f.viewport.height * f.ground.rows);
+  const gap = Math.max(ratio, Math.min(size, sizeY) * 0.12);
+  context.lineWidth = Math.max(ratio, Math.min(size, sizeY) * 0.14);
+  for (let r = 0; r < counts.rows; r++) {
+    const y = yOf(f, window.rowStart + r);
+    if (y > f.height || y + sizeY < 0) continue;
+    for (let c = 0; c < counts.columns; c++) {
+      const at = r * counts.columns + c;
+      if (counts.original[at] === 0 && counts.fill[at] === 0) continue;
+      const x = xOf(f, window.columnStart + c);
+      if (x > f.width || x + size < 0) continue;
+      if (counts.original[at] > 0) {
+        context.fillStyle = f.colours.ink;
+        context.fillRect(x + gap, y + gap, size - 2 * gap, sizeY - 2 * gap);
+      } else {
+        context.strokeStyle = f.colours.fill;
+        const inset = gap + context.lineWidth / 2;
+        context.strokeRect(x + inset, y + inset, size - 2 * inset, sizeY - 2 * inset);
+      }
+    }
+  }
+}
+
+/** Separators of a dissection: a blue bracket along the diagonal for each, thinner for deeper levels. */
+function drawSeparators(f: Frame): void {
+  const { context, ratio, ground } = f;
+  context.strokeStyle = f.colours.separator;
+  for (const { start, end, level } of ground.separators) {
+    const x = xOf(f, start);
+    const y = yOf(f, start);
+    const w = xOf(f, end) - x;
+    const h = yOf(f, end) - y;
+    if (w < 3 * ratio || x > f.width || y > f.height || x + w < 0 || y + h < 0) continue;
+    context.lineWidth = Math.max(1, 2.5 - 0.5 * level) * ratio;
+    context.strokeRect(x, y, w, h);
+  }
+}
+
+function drawMarks(f: Frame): void {
+  const { context, ratio } = f;
+  const length = 9 * ratio;
+  context.fillStyle = f.colours.separator;
+  context.strokeStyle = f.colours.separator;
+  context.lineWidth = ratio;
+  for (const row of f.marks.rows) {
+    const y = yOf(f, row + 0.5);
+    if (y < 0 || y > f.height) continue;
+    triangle(context, 0, y, length, 0);
+    triangle(context, f.width, y, -length, 0);
+  }
+  for (const column of f.marks.columns) {
+    const x = xOf(f, column + 0.5);
+    if (x < 0 || x > f.width) continue;
+    triangle(context, x, 0, 0, length);
+    triangle(context, x, f.height, 0, -length);
+  }
+}
+
+function triangle(context: CanvasRenderingContext2D, x: number, y: number, dx: number, dy: number): void {
+  context.beginPath();
+  context.moveTo(x + dx, y + dy);
+  context.lineTo(x - dy / 2, y - dx / 2);
+  context.lineTo(x + dy / 2, y + dx / 2);
+  context.closePath();
+  context.fill();
+}
+
+/** The eliminated unknowns of a fill path, on the diagonal, joined by steps along rows and columns. */
+function drawPath(f: Frame, positions: Int32Array): void {
+  const { context, ratio } = f;
+  context.strokeStyle = f.colours.fill;
+  context.fillStyle = f.colours.paper;
+  context.lineWidth = 1.5 * ratio;
+  context.setLineDash([4 * ratio, 3 * ratio]);
+  context.beginPath();
+  for (let k = 0; k + 1 < positions.length; k++) {
+    const a = positions[k];
+    const b = positions[k + 1];
+    context.moveTo(xOf(f, a + 0.5), yOf(f, a + 0.5));
+    context.lineTo(xOf(f, Math.min(a, b) + 0.5), yOf(f, Math.max(a, b) + 0.5));
+    context.lineTo(xOf(f, b + 0.5), yOf(f, b + 0.5));
+  }
+  context.stroke();
+  context.setLineDash([]);
+  for (let k = 0; k < positions.length; k++) {
+    context.beginPath();
+    context.arc(xOf(f, positions[k] + 0.5), yOf(f, positions[k] + 0.5), 4 * ratio, 0, 2 * Math.PI);
+    context.fill();
+    context.stroke();
+  }
+}
+
+function drawCrosshair(f: Frame): void {
+  if (f.crosshair === null) return;
+  const { context, ratio } = f;
+  const x = xOf(f, f.crosshair.column + 0.5);
+  const y = yOf(f, f.crosshair.row + 0.5);
+  context.strokeStyle = f.colours.crosshair;
+  context.lineWidth = ratio;
+  const gap = 7 * ratio;
+  context.beginPath();
+  context.moveTo(0, y);
+  context.lineTo(x - gap, y);
+  context.moveTo(x + gap, y);
+  context.lineTo(f.width, y);
+  context.moveTo(x, 0);
+  context.lineTo(x, y - gap);
+  context.moveTo(x, y + gap);
+  context.lineTo(x, f.height);
+  context.stroke();
+}
+
+/** What the cell at two positions stands for: its ranges (half-open positions) and its counts. */
+export interface CellFacts {
+  readonly rowStart: number;
+  readonly rowEnd: number;
+  readonly columnStart: number;
+  readonly columnEnd: number;
+  readonly original: number;
+  readonly fill: number;
+  readonly kind: 'exact' | 'sampled';
+}
+
+/** Facts of the cell under a cursor, from the sharpest image that shows it; null where none does. */
+export function cellFacts(
+  images: readonly (MapImage | null)[],
+  cursor: Pick<MapCursor, 'row' | 'column'>,
+): CellFacts | null {
+  for (const image of images) {
+    if (image === null) continue;
+    const { counts } = image;
+    const { window: w } = counts;
+    if (cursor.row < w.rowStart || cursor.row >= w.rowEnd) continue;
+    if (cursor.column < w.columnStart || cursor.column >= w.columnEnd) continue;
+    const height = w.rowEnd - w.rowStart;
+    const width = w.columnEnd - w.columnStart;
+    const r = cellAt(cursor.row - w.rowStart, height, counts.rows);
+    const c = cellAt(cursor.column - w.columnStart, width, counts.columns);
+    const at = r * counts.columns + c;
+    return {
+      rowStart: w.rowStart + cellStart(r, height, counts.rows),
+      rowEnd: w.rowStart + cellStart(r + 1, height, counts.rows),
+      columnStart: w.columnStart + cellStart(c, width, counts.columns),
+      columnEnd: w.columnStart + cellStart(c + 1, width, counts.columns),
+      original: counts.original[at],
+      fill: counts.fill[at],
+      kind: counts.kind,
+    };
+  }
+  return null;
+}
+
+/** The cell that holds a position; consistent with `cellStart`. */
+function cellAt(position: number, positions: number, cells: number): number {
+  let cell = Math.min(cells - 1, Math.floor((position * cells) / positions));
+  while (cell + 1 < cells && cellStart(cell + 1, positions, cells) <= position) cell++;
+  while (cell > 0 && cellStart(cell, positions, cells) > position) cell--;
+  return cell;
+}
