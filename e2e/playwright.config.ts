@@ -10,7 +10,9 @@ function browserOnPath(): string | undefined {
 }
 
 const executablePath = browserOnPath();
-const port = 4173;
+const port = Number(process.env.FILLCAST_PORT ?? 4173);
+/** FILLCAST_DEV=1 tests the development server, which needs no build: for one spec while working on it. */
+const server = process.env.FILLCAST_DEV === '1' ? '' : 'preview ';
 
 export default defineConfig({
   testDir: '.',
@@ -38,7 +40,7 @@ export default defineConfig({
     },
   },
   webServer: {
-    command: `node node_modules/vite/bin/vite.js preview --port ${port} --strictPort`,
+    command: `node node_modules/vite/bin/vite.js ${server}--port ${port} --strictPort`,
     cwd: '..',
     url: `http://localhost:${port}/`,
     reuseExistingServer: false,
