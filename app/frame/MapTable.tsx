@@ -1,4 +1,3 @@
-import { useMemo } from 'react';
 import { useStore } from 'zustand';
 import type { Pane } from '../maps/contract.ts';
 import { Maps } from '../maps/Maps.tsx';
@@ -7,6 +6,7 @@ import { type SheetView, setSheetView, viewStore } from '../state/view.ts';
 import { Comparison } from '../trials/Comparison.tsx';
 import { sayChoice } from '../trials/explain.ts';
 import { Tabs } from './Tabs.tsx';
+import { useStable } from './useStable.ts';
 
 const views: readonly { name: SheetView; label: string }[] = [
   { name: 'maps', label: 'Maps' },
@@ -15,13 +15,15 @@ const views: readonly { name: SheetView; label: string }[] = [
 
 /** The maps that a sheet shows now: the original first, then the trials put on the sheet. */
 function panesOf({ matrix, shown, trials }: Sheet): readonly Pane[] {
-  const original: Pane = { id: matrix, letter: '', title: 'as read', matrix, trial: null };
+  const original: Pane = { id: matrix, letter: '', title: 'as read', matrix, trial: null, held: 0 };
   return [
     original,
     ...shown.flatMap((id) => {
       const trial = trials.find((t) => t.id === id);
       if (trial === undefined || trial.state !== 'done') return [];
-      return [{ id, letter: trial.letter, title: sayChoice(trial.choice), matrix, trial: id }];
+      return [
+        { id, letter: trial.letter, title: sayChoice(trial.choice), matrix, trial: id, held: trial.heldLast.length },
+      ];
     }),
   ];
 }
@@ -30,7 +32,7 @@ function panesOf({ matrix, shown, trials }: Sheet): readonly Pane[] {
 export function MapTable({ sheet }: { sheet: Sheet }) {
   const pointing = useStore(viewStore, (v) => v.pointing);
   const view = useStore(viewStore, (v) => v.sheetView);
-  const panes = useMemo(() => panesOf(sheet), [sheet]);
+  const panes = useStable(panesOf(sheet));
   if (sheet.summary === null) return null;
   return (
     <Tabs
@@ -44,7 +46,13 @@ export function MapTable({ sheet }: { sheet: Sheet }) {
       {view === 'comparison' ? (
         <Comparison sheet={sheet} />
       ) : (
-        <Maps panes={panes} rows={sheet.summary.rows} columns={sheet.summary.columns} pointing={pointing} />
+        <Maps
+          name={sheet.name}
+          panes={panes}
+          rows={sheet.summary.rows}
+          columns={sheet.summary.columns}
+          pointing={pointing}
+        />
       )}
     </Tabs>
   );

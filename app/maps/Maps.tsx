@@ -1,50 +1,72 @@
-import { useEffect, useRef } from 'react';
-import { Neatline } from '../frame/Neatline.tsx';
-import { pool } from '../state/vault.ts';
-import type { MapsProps, Pane } from './contract.ts';
+import { useEffect, useState } from 'react';
+import { askWhy } from './ask.ts';
+import type { MapsProps } from './contract.ts';
+import { placeOf } from './ground.ts';
+import { MapPane } from './MapPane.tsx';
+import { Margin } from './Margin.tsx';
+import { mapsStore, resetMaps, setViewport } from './mapsStore.ts';
+import { paneControls } from './paneControl.ts';
+import { everything } from './viewport.ts';
 
-const cells = 320;
+const ask = () => void askWhy();
 
-function MapOf({ pane }: { pane: Pane }) {
-  const canvas = useRef<HTMLCanvasElement>(null);
+/** The maps side by side, with their margin. Where the page is narrow, one at a time. */
+export function Maps({ name, panes, rows, columns, pointing }: MapsProps) {
+  const [frontId, setFront] = useState(panes[panes.length - 1].id);
+  const [drawn, setDrawn] = useState(0);
+  const front = panes.some((p) => p.id === frontId) ? frontId : panes[panes.length - 1].id;
+  const { matrix } = panes[0];
+
+  // biome-ignore lint/correctness/useExhaustiveDependencies: the look belongs to the matrix
+  useEffect(() => resetMaps, [matrix]);
+
+  // a crosshair in a map that was taken off the sheet goes with it
   useEffect(() => {
-    const task = pool.run('density', { key: pane.matrix, cells }, { lane: 'quick', matrices: [pane.matrix] });
-    void task.reply.then((reply) => {
-      const context = canvas.current?.getContext('2d');
-      if (!reply.ok || context === null || context === undefined) return;
-      const { rows, columns, original } = reply.value;
-      context.canvas.width = columns;
-      context.canvas.height = rows;
-      const image = context.createImageData(columns, rows);
-      let most = 1;
-      for (const d of original) most = Math.max(most, d);
-      for (let c = 0; c < original.length; c++) {
-        if (original[c] > 0) image.data[4 * c + 3] = 255 * (0.4 + 0.6 * (Math.log1p(original[c]) / Math.log1p(most)));
-      }
-      context.putImageData(image, 0, 0);
-    });
-    return () => task.stop();
-  }, [pane]);
-  return (
-    <figure className="map">
-      <Neatline className="map-frame">
-        <canvas ref={canvas} aria-label={`Pattern ${pane.title}`} role="img" />
-      </Neatline>
-      <figcaption className="small">
-        {pane.letter === '' ? null : <strong>{pane.letter} </strong>}
-        {pane.title}
-      </figcaption>
-    </figure>
-  );
-}
+    const { cursor } = mapsStore.getState();
+    if (cursor !== null && panes.every((p) => p.id !== cursor.pane)) {
+      mapsStore.setState({ cursor: null, pinned: false, path: null });
+    }
+  }, [panes]);
 
-/** The maps side by side. */
-export function Maps({ panes }: MapsProps) {
+  useEffect(() => {
+    const control = paneControls.get(panes[0].id);
+    if (pointing === null || pointing.indices.length === 0 || control === undefined) return;
+    const [a, b] = pointing.indices;
+    const row = pointing.axis === 'columns' ? Math.min(a, rows - 1) : a;
+    const column = pointing.axis === 'entries' ? b : Math.min(a, columns - 1);
+    setViewport(everything);
+    control.point(placeOf(control.ground, row, column), true);
+  }, [pointing, panes, rows, columns]);
+
   return (
-    <div className="maps">
-      {panes.map((pane) => (
-        <MapOf key={pane.id} pane={pane} />
-      ))}
+    <div className="maps-and-margin">
+      {panes.length < 2 ? null : (
+        <label className="map-choice small">
+          <span>map</span>{' '}
+          <select value={front} onChange={(event) => setFront(event.target.value)}>
+            {panes.map((pane) => (
+              <option key={pane.id} value={pane.id}>
+                {pane.letter === '' ? pane.title : `${pane.letter} ${pane.title}`}
+              </option>
+            ))}
+          </select>
+        </label>
+      )}
+      <div className="maps">
+        {panes.map((pane) => (
+          <MapPane
+            key={pane.id}
+            pane={pane}
+            rows={rows}
+            columns={columns}
+            pointing={pointing}
+            front={pane.id === front}
+            onAsk={ask}
+            onDrawn={() => setDrawn((k) => k + 1)}
+          />
+        ))}
+      </div>
+      <Margin name={name} panes={panes} rows={rows} columns={columns} drawn={drawn} onAsk={ask} />
     </div>
   );
 }

@@ -12,10 +12,14 @@ export interface Pane {
   readonly matrix: MatrixKey;
   /** the trial whose order and factor are drawn; null draws the matrix as read */
   readonly trial: string | null;
+  /** unknowns kept at the end of the trial's order */
+  readonly held: number;
 }
 
 /** What the page gives to the maps. Zoom, pan and crosshair are the maps' own, and linked between the panes. */
 export interface MapsProps {
+  /** of the sheet; names exported pictures */
+  readonly name: string;
   /** one to four, of equal scale */
   readonly panes: readonly Pane[];
   readonly rows: number;

@@ -1,6 +1,9 @@
 import { cellStart } from '../../engine/picture/window.ts';
+import type { MapOutlines } from '../workers/mapOperations.ts';
 import type { Ground } from './ground.ts';
-import type { MapCursor } from './mapsStore.ts';
+import type { MapCursor, Outlines } from './mapsStore.ts';
+import type { MarkedPlaces } from './marks.ts';
+import type { Palette } from './palette.ts';
 import type { MapImage } from './paneImages.ts';
 import type { Viewport } from './viewport.ts';
 
@@ -17,17 +20,15 @@ export interface Frame {
   readonly close: MapImage | null;
   /** where the crosshair stands in this pane, positions; null for none */
   readonly crosshair: { readonly row: number; readonly column: number } | null;
-  readonly separators: boolean;
+  /** null draws none */
+  readonly outlines: MapOutlines | null;
+  readonly outlined: Outlines;
+  /** unknowns at the end that are held there */
+  readonly held: number;
+  /** positions of a fill path, ends first and last */
   readonly path: Int32Array | null;
-  /** lines to mark, positions */
-  readonly marks: { readonly rows: readonly number[]; readonly columns: readonly number[] };
-  readonly colours: {
-    readonly ink: string;
-    readonly fill: string;
-    readonly separator: string;
-    readonly crosshair: string;
-    readonly paper: string;
-  };
+  readonly marks: MarkedPlaces;
+  readonly colours: Palette;
 }
 
 /** least size of a cell, in CSS pixels, at which single entries are drawn as shapes */
@@ -41,11 +42,10 @@ export function drawFrame(f: Frame): void {
   const shapes = shapesOf(f);
   if (shapes !== null) drawShapes(f, shapes);
   else {
-    const sharp = f.close !== null && covers(f, f.close);
-    if (f.whole !== null && !sharp) drawImage(f, f.whole);
-    if (f.close !== null && (sharp || f.whole === null)) drawImage(f, f.close);
+    if (f.whole !== null) drawImage(f, f.whole);
+    if (f.close !== null && (f.whole === null || finer(f.close, f.whole))) drawImage(f, f.close);
   }
-  if (f.separators) drawSeparators(f);
+  drawOutlines(f);
   drawMarks(f);
   if (f.path !== null) drawPath(f, f.path);
   drawCrosshair(f);
@@ -73,12 +73,25 @@ function covers(f: Frame, image: MapImage): boolean {
   );
 }
 
+function finer(a: MapImage, b: MapImage): boolean {
+  return cellSide(a) < cellSide(b);
+}
+
+/** positions along a side of a cell */
+function cellSide({ counts }: MapImage): number {
+  return (counts.window.columnEnd - counts.window.columnStart) / counts.columns;
+}
+
+/** Draws an image in the place of what lies there: its cells are translucent, so what is under it goes first. */
 function drawImage(f: Frame, image: MapImage): void {
   const { window } = image.counts;
   const x = xOf(f, window.columnStart);
   const y = yOf(f, window.rowStart);
+  const width = xOf(f, window.columnEnd) - x;
+  const height = yOf(f, window.rowEnd) - y;
   f.context.imageSmoothingEnabled = false;
-  f.context.drawImage(image.canvas, x, y, xOf(f, window.columnEnd) - x, yOf(f, window.rowEnd) - y);
+  f.context.clearRect(x, y, width, height);
+  f.context.drawImage(image.canvas, x, y, width, height);
 }
 
 /** The image whose cells are single positions, large enough on the screen for shapes. */
@@ -95,15 +108,48 @@ function shapesOf(f: Frame): MapImage | null {
   return null;
 }
 
+/** One entry drawn singly, device pixels. */
+export interface Square {
+  readonly x: number;
+  readonly y: number;
+  readonly width: number;
+  readonly height: number;
+  /** width of the line of an open square */
+  readonly stroke: number;
+  readonly original: boolean;
+}
+
+/** The entries in sight where they are drawn singly; null where the map is of dots. */
+export function shapesIn(f: Frame): readonly Square[] | null {
+  const image = shapesOf(f);
+  if (image === null) return null;
+  const out: Square[] = [];
+  eachShape(f, image, (square) => out.push(square));
+  return out;
+}
+
 /** Original entries as filled squares, fill-in as open ones. */
 function drawShapes(f: Frame, image: MapImage): void {
-  const { context, ratio } = f;
-  const { counts } = image;
+  const { context } = f;
+  context.fillStyle = f.colours.ink;
+  context.strokeStyle = f.colours.fill;
+  eachShape(f, image, ({ x, y, width, height, stroke, original }) => {
+    if (original) {
+      context.fillRect(x, y, width, height);
+      return;
+    }
+    context.lineWidth = stroke;
+    context.strokeRect(x, y, width, height);
+  });
+}
+
+function eachShape(f: Frame, { counts }: MapImage, take: (square: Square) => void): void {
+  const { ratio } = f;
   const { window } = counts;
   const size = f.width / (f.viewport.width * f.ground.columns);
   const sizeY = f.height / (f.viewport.height * f.ground.rows);
   const gap = Math.max(ratio, Math.min(size, sizeY) * 0.12);
-  context.lineWidth = Math.max(ratio, Math.min(size, sizeY) * 0.14);
+  const stroke = Math.max(ratio, Math.min(size, sizeY) * 0.14);
   for (let r = 0; r < counts.rows; r++) {
     const y = yOf(f, window.rowStart + r);
     if (y > f.height || y + sizeY < 0) continue;
@@ -112,39 +158,77 @@ function drawShapes(f: Frame, image: MapImage): void {
       if (counts.original[at] === 0 && counts.fill[at] === 0) continue;
       const x = xOf(f, window.columnStart + c);
       if (x > f.width || x + size < 0) continue;
-      if (counts.original[at] > 0) {
-        context.fillStyle = f.colours.ink;
-        context.fillRect(x + gap, y + gap, size - 2 * gap, sizeY - 2 * gap);
-      } else {
-        context.strokeStyle = f.colours.fill;
-        const inset = gap + context.lineWidth / 2;
-        context.strokeRect(x + inset, y + inset, size - 2 * inset, sizeY - 2 * inset);
-      }
+      const original = counts.original[at] > 0;
+      const inset = original ? gap : gap + stroke / 2;
+      take({
+        x: x + inset,
+        y: y + inset,
+        width: size - 2 * inset,
+        height: sizeY - 2 * inset,
+        stroke,
+        original,
+      });
     }
   }
 }
 
-/** Separators of a dissection: a blue bracket along the diagonal for each, thinner for deeper levels. */
-function drawSeparators(f: Frame): void {
-  const { context, ratio, ground } = f;
-  context.strokeStyle = f.colours.separator;
-  for (const { start, end, level } of ground.separators) {
-    const x = xOf(f, start);
-    const y = yOf(f, start);
-    const w = xOf(f, end) - x;
-    const h = yOf(f, end) - y;
-    if (w < 3 * ratio || x > f.width || y > f.height || x + w < 0 || y + h < 0) continue;
-    context.lineWidth = Math.max(1, 2.5 - 0.5 * level) * ratio;
-    context.strokeRect(x, y, w, h);
+/** Squares along the diagonal, blue: separators (thinner for deeper levels), diagonal blocks, unknowns held last; or supernodes. */
+function drawOutlines(f: Frame): void {
+  const { outlines, held, ground } = f;
+  if (outlines === null) return;
+  f.context.strokeStyle = f.colours.separator;
+  if (f.outlined === 'supernodes') {
+    if (outlines.supernodes !== null) drawRuns(f, outlines.supernodes);
+    return;
+  }
+  for (const { start, end, level } of outlines.separators) square(f, start, end, Math.max(1, 2.5 - 0.5 * level));
+  if (outlines.blockStart !== null) drawRuns(f, outlines.blockStart);
+  if (held > 0) square(f, ground.rows - held, ground.rows, 2.5);
+}
+
+/** The runs between increasing starts that are in sight and wide enough to be seen; at most so many that a frame stays a frame. */
+function drawRuns(f: Frame, start: Int32Array): void {
+  const count = start.length - 1;
+  const { viewport: v, ground } = f;
+  const from = Math.max(v.left, v.top) === 0 ? 0 : Math.floor(Math.min(v.left, v.top) * ground.columns);
+  let k = lastAtOrBefore(start, Math.max(0, from));
+  const to = Math.ceil(Math.max(v.left + v.width, v.top + v.height) * ground.columns);
+  const least = (3 * f.ratio * v.width * ground.columns) / f.width;
+  for (let looked = 0; k < count && start[k] < to && looked < mostRuns; k++, looked++) {
+    if (start[k + 1] - start[k] >= least) square(f, start[k], start[k + 1], 1.2);
   }
 }
 
+const mostRuns = 400_000;
+
+function lastAtOrBefore(start: Int32Array, position: number): number {
+  let low = 0;
+  let high = start.length - 1;
+  while (low < high) {
+    const middle = (low + high + 1) >> 1;
+    if (start[middle] <= position) low = middle;
+    else high = middle - 1;
+  }
+  return low;
+}
+
+function square(f: Frame, start: number, end: number, width: number): void {
+  const x = xOf(f, start);
+  const y = yOf(f, start);
+  const w = xOf(f, end) - x;
+  const h = yOf(f, end) - y;
+  if (w < 3 * f.ratio || x > f.width || y > f.height || x + w < 0 || y + h < 0) return;
+  f.context.lineWidth = width * f.ratio;
+  f.context.strokeRect(x, y, w, h);
+}
+
+/** Triangles at the edges where whole lines are meant, rings where entries are. */
 function drawMarks(f: Frame): void {
   const { context, ratio } = f;
   const length = 9 * ratio;
   context.fillStyle = f.colours.separator;
   context.strokeStyle = f.colours.separator;
-  context.lineWidth = ratio;
+  context.lineWidth = 1.5 * ratio;
   for (const row of f.marks.rows) {
     const y = yOf(f, row + 0.5);
     if (y < 0 || y > f.height) continue;
@@ -156,6 +240,16 @@ function drawMarks(f: Frame): void {
     if (x < 0 || x > f.width) continue;
     triangle(context, x, 0, 0, length);
     triangle(context, x, f.height, 0, -length);
+  }
+  const { entries } = f.marks;
+  const radius = Math.max(5 * ratio, (0.7 * f.width) / (f.viewport.width * f.ground.columns));
+  for (let k = 0; k + 1 < entries.length; k += 2) {
+    const x = xOf(f, entries[k + 1] + 0.5);
+    const y = yOf(f, entries[k] + 0.5);
+    if (x < -radius || y < -radius || x > f.width + radius || y > f.height + radius) continue;
+    context.beginPath();
+    context.arc(x, y, radius, 0, 2 * Math.PI);
+    context.stroke();
   }
 }
 

@@ -5,13 +5,14 @@ import type { Pane } from './contract.ts';
 export interface Ground {
   readonly rows: number;
   readonly columns: number;
+  /** only the lower triangle is drawn: what the factorization works on */
+  readonly half: boolean;
   /** position -> original row or column */
   originalRow(position: number): number;
   originalColumn(position: number): number;
   /** original -> position; made on first use */
   rowPosition(original: number): number;
   columnPosition(original: number): number;
-  readonly separators: readonly { readonly start: number; readonly end: number; readonly level: number }[];
 }
 
 const same = (k: number): number => k;
@@ -23,14 +24,14 @@ export function groundOf(pane: Pane, rows: number, columns: number): Ground {
     return {
       rows,
       columns,
+      half: false,
       originalRow: same,
       originalColumn: same,
       rowPosition: same,
       columnPosition: same,
-      separators: [],
     };
   }
-  const { effective, plan, requested, separators } = result;
+  const { effective, plan, choice } = result;
   const square = rows === columns;
   const { plannedRow } = plan;
   let columnAt: Int32Array | null = null;
@@ -45,6 +46,7 @@ export function groundOf(pane: Pane, rows: number, columns: number): Ground {
   return {
     rows,
     columns,
+    half: square && (choice.factorization === 'cholesky' || choice.factorization === 'ldlt'),
     originalRow,
     originalColumn: (k) => effective[k],
     rowPosition: (i) => {
@@ -55,12 +57,12 @@ export function groundOf(pane: Pane, rows: number, columns: number): Ground {
       columnAt ??= inverse(columns, (k) => effective[k]);
       return columnAt[j];
     },
-    // a postorder may move separators; their ranges are drawn only where the order is the requested one
-    separators: sameOrder(requested, effective) ? separators : [],
   };
 }
 
-function sameOrder(a: Int32Array, b: Int32Array): boolean {
-  for (let k = 0; k < a.length; k++) if (a[k] !== b[k]) return false;
-  return true;
+/** Where an original entry is drawn on a ground: in the lower triangle where only that is drawn. */
+export function placeOf(ground: Ground, originalRow: number, originalColumn: number): { row: number; column: number } {
+  const row = ground.rowPosition(originalRow);
+  const column = ground.columnPosition(originalColumn);
+  return ground.half && row < column ? { row: column, column: row } : { row, column };
 }

@@ -1,6 +1,6 @@
 import type { DensityMap, PictureWindow } from '../../engine/picture/window.ts';
 import { pool, resultOf } from '../state/vault.ts';
-import type { MapAnswer } from '../workers/mapOperations.ts';
+import type { MapAnswer, MapOutlines } from '../workers/mapOperations.ts';
 import type { Task } from '../workers/pool.ts';
 import type { Pane } from './contract.ts';
 import type { RasterInks } from './raster.ts';
@@ -29,6 +29,8 @@ export class PaneImages {
   whole: MapImage | null = null;
   close: MapImage | null = null;
   failed: string | null = null;
+  /** null until the maps of a trial are laid, and for the matrix as read */
+  outlines: MapOutlines | null = null;
   private readonly pane: Pane;
   private readonly changed: () => void;
   private task: Task<MapAnswer> | null = null;
@@ -75,7 +77,8 @@ export class PaneImages {
 
   private async run(wish: Wish, whole: boolean): Promise<void> {
     const version = ++this.version;
-    let answer = await this.request(wish);
+    // laid at the first request of a pane, and again if the worker was replaced meanwhile
+    let answer = this.pane.trial !== null && this.outlines === null ? laidFirst : await this.request(wish);
     if (answer !== null && !answer.laid && (await this.lay())) answer = await this.request(wish);
     this.task = null;
     if (this.gone || version !== this.version) return;
@@ -105,9 +108,13 @@ export class PaneImages {
     const result = trial === null ? null : resultOf(trial);
     if (trial === null || result === null) return false;
     const reply = await pool.run('layMap', { key: matrix, trial, result }, { lane: 'quick', matrices: [matrix] }).reply;
+    if (reply.ok) this.outlines = reply.value;
+    else if (reply.failure.kind !== 'stopped') this.failed = reply.failure.message;
     return reply.ok;
   }
 }
+
+const laidFirst: MapAnswer = { laid: false };
 
 function fits({ counts, shade, inks }: MapImage, wish: Wish): boolean {
   const a = counts.window;

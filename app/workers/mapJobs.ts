@@ -3,6 +3,7 @@ import { fillReason } from '../../engine/picture/fillPath.ts';
 import { rasterOf } from '../maps/raster.ts';
 import type { Job } from './jobs.ts';
 import type { MapAnswer, Spot } from './mapOperations.ts';
+import { outlinesOf } from './mapOutlines.ts';
 import { type MapPlan, mapOf, mapPlanOf } from './mapPlan.ts';
 import type { MatrixKey } from './protocol.ts';
 import type { Shelf } from './shelf.ts';
@@ -16,7 +17,7 @@ function planFor(shelf: Shelf, key: MatrixKey, trial: string | null): MapPlan | 
 export const layMap: Job<'layMap'> = ({ key, trial, result }, { shelf }) => {
   const slot = shelf.derive<{ plan: MapPlan | undefined }>(key, `map ${trial}`, () => ({ plan: undefined }));
   slot.plan ??= mapPlanOf(shelf.get(key).loaded.matrix, result);
-  return null;
+  return outlinesOf(result);
 };
 
 export const map: Job<'map'> = ({ key, trial, window, cellRows, cellColumns, shade, inks }, { shelf }) => {

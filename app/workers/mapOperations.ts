@@ -8,6 +8,22 @@ export type MapAnswer =
   | { readonly laid: false }
   | { readonly laid: true; readonly counts: DensityMap; readonly pixels: Uint8ClampedArray<ArrayBuffer> };
 
+/** Positions start … end − 1 of an order; level 0 is the first separator. */
+export interface Span {
+  readonly start: number;
+  readonly end: number;
+  readonly level: number;
+}
+
+/** What can be outlined along the diagonal of a trial's maps. */
+export interface MapOutlines {
+  readonly separators: readonly Span[];
+  /** block -> first position, one more at the end; null for one block */
+  readonly blockStart: Int32Array | null;
+  /** fundamental supernode -> first position, one more at the end; null where columns are not grouped */
+  readonly supernodes: Int32Array | null;
+}
+
 /** What stands at one position. Original numbers, 0-based. */
 export interface Spot {
   readonly row: number;
@@ -28,7 +44,7 @@ export interface FillPath {
 /** What the maps ask of the worker that draws. */
 export interface MapOperations {
   /** hands over the order of a trial, once, before its maps */
-  layMap: { ask: { key: MatrixKey; trial: string; result: TrialResult }; answer: null; early: never };
+  layMap: { ask: { key: MatrixKey; trial: string; result: TrialResult }; answer: MapOutlines; early: never };
   /** a window of the matrix as read (trial null) or of a trial's factor */
   map: {
     ask: {
