@@ -21,6 +21,7 @@ export function Margin(props: {
 }) {
   const { name, panes, rows, columns, drawn, onAsk } = props;
   const shade = useStore(mapsStore, (s) => s.shade);
+  const linked = useStore(mapsStore, (s) => s.linked);
   const outlines = useStore(mapsStore, (s) => s.outlines);
   const [saving, setSaving] = useState(false);
   const zoom = (factor: number) => {
@@ -62,6 +63,18 @@ export function Margin(props: {
             <option value="any">full for any entry</option>
           </select>
         </label>
+        {panes.length > 1 ? (
+          <label>
+            <span>linked by</span>
+            <select
+              value={linked}
+              onChange={(event) => mapsStore.setState({ linked: event.target.value as 'places' | 'entry' })}
+            >
+              <option value="places">places in the order</option>
+              <option value="entry">the entry held</option>
+            </select>
+          </label>
+        ) : null}
         {trials ? (
           <label>
             <span>outlines</span>

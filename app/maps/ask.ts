@@ -30,4 +30,8 @@ export async function askWhy(): Promise<void> {
   }
   const { positions, unknowns } = reply.value;
   mapsStore.setState({ pinned: true, path: { pane: pane.id, positions, unknowns } });
+  // the path lies on the diagonal, often far from the entry it explains
+  if (!Array.from(positions).every((k) => control.inSight({ row: k, column: k })) || !control.inSight(cursor)) {
+    control.goToAll(positions);
+  }
 }

@@ -10,6 +10,8 @@ export interface MapsState {
   readonly pinned: boolean;
   readonly shade: 'density' | 'any';
   readonly outlines: Outlines;
+  /** zoomed maps show the same places of their orders, or the surroundings of the entry that is held */
+  readonly linked: 'places' | 'entry';
   /** fill path shown in a pane; null for none */
   readonly path: ShownPath | null;
 }
@@ -43,6 +45,7 @@ export const mapsStore = createStore<MapsState>()(() => ({
   pinned: false,
   shade: 'density',
   outlines: 'parts',
+  linked: 'places',
   path: null,
 }));
 

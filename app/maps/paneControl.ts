@@ -7,7 +7,7 @@ import { type MapCursor, mapsStore, setCursor, setViewport } from './mapsStore.t
 import { type MarkedPlaces, noMarks } from './marks.ts';
 import { followPalette, palette } from './palette.ts';
 import { PaneImages } from './paneImages.ts';
-import { centreOn, panBy, positionsOf, type Viewport, zoomAt } from './viewport.ts';
+import { centreOn, clampViewport, panBy, positionsOf, type Viewport, zoomAt } from './viewport.ts';
 
 /** Asking for a sharper image waits until the hand has rested so long, in milliseconds. */
 const restBeforeSharp = 70;
@@ -49,7 +49,12 @@ export class PaneControl {
       this.schedule();
       this.told();
     });
-    this.leave.push(mapsStore.subscribe((now, before) => this.follow(now.viewport !== before.viewport)));
+    this.leave.push(
+      mapsStore.subscribe((now, before) => {
+        const looks = now.linked === 'entry' || now.linked !== before.linked;
+        this.follow(now.viewport !== before.viewport || (looks && now.cursor !== before.cursor));
+      }),
+    );
     this.leave.push(followPalette(() => this.refresh()));
     const observer = new ResizeObserver(() => this.resize());
     observer.observe(canvas);
@@ -91,7 +96,8 @@ export class PaneControl {
 
   /** Everything a frame is drawn from, on any canvas. */
   frame(context: CanvasRenderingContext2D, width: number, height: number, ratio: number): Frame {
-    const { viewport, outlines, path } = mapsStore.getState();
+    const { outlines, path } = mapsStore.getState();
+    const viewport = this.look();
     return {
       context,
       width,
@@ -111,6 +117,30 @@ export class PaneControl {
     };
   }
 
+  /**
+   * What this pane looks at: the places that all maps share, or, when the maps follow a held entry, the places around where that
+   * entry lies in this order.
+   */
+  look(): Viewport {
+    const { viewport, linked, cursor, pinned } = mapsStore.getState();
+    if (linked === 'places' || !pinned || cursor === null || cursor.pane === this.pane.id) return viewport;
+    const place = this.crosshair();
+    const source = paneControls.get(cursor.pane);
+    if (place === null || source === undefined) return viewport;
+    const { top, left, height, width } = viewport;
+    const down = ((cursor.row + 0.5) / source.ground.rows - top) / height;
+    const right = ((cursor.column + 0.5) / source.ground.columns - left) / width;
+    return clampViewport(
+      {
+        height,
+        width,
+        top: (place.row + 0.5) / this.ground.rows - down * height,
+        left: (place.column + 0.5) / this.ground.columns - right * width,
+      },
+      this.least,
+    );
+  }
+
   /** Where the crosshair stands here: where it was set, or where the same entry lies in this order. */
   private crosshair(): { row: number; column: number } | null {
     const { cursor } = mapsStore.getState();
@@ -127,7 +157,7 @@ export class PaneControl {
 
   /** The position under a point, shares of the pane. */
   positionAt(x: number, y: number): { row: number; column: number } {
-    const { viewport: v } = mapsStore.getState();
+    const v = this.look();
     const at = (share: number, n: number): number => Math.max(0, Math.min(n - 1, Math.floor(share * n)));
     return { row: at(v.top + y * v.height, this.ground.rows), column: at(v.left + x * v.width, this.ground.columns) };
   }
@@ -155,7 +185,7 @@ export class PaneControl {
 
   /** Whether a position of this pane is in sight. */
   inSight({ row, column }: { row: number; column: number }): boolean {
-    const { viewport: v } = mapsStore.getState();
+    const v = this.look();
     const y = (row + 0.5) / this.ground.rows;
     const x = (column + 0.5) / this.ground.columns;
     return y >= v.top && y <= v.top + v.height && x >= v.left && x <= v.left + v.width;
@@ -167,6 +197,18 @@ export class PaneControl {
 
   pan(dx: number, dy: number): void {
     setViewport(panBy(mapsStore.getState().viewport, dx, dy, this.least));
+  }
+
+  /** Shows all these positions, rows and columns alike, with some ground around them. */
+  goToAll(positions: ArrayLike<number>): void {
+    let first = Number.POSITIVE_INFINITY;
+    let last = 0;
+    for (let k = 0; k < positions.length; k++) {
+      first = Math.min(first, positions[k]);
+      last = Math.max(last, positions[k]);
+    }
+    const middle = (first + last) >> 1;
+    this.goTo({ row: middle, column: middle }, Math.max(closest, 1.2 * (last - first) + 4));
   }
 
   /** Brings a position to the middle, `across` positions wide; keeps the scale without it. */
@@ -217,7 +259,8 @@ export class PaneControl {
     const { width, height } = this.canvas;
     const { rows, columns } = this.ground;
     if (width < 2 || height < 2 || rows === 0 || columns === 0) return;
-    const { shade, viewport: v } = mapsStore.getState();
+    const { shade } = mapsStore.getState();
+    const v = this.look();
     const { inks } = palette();
     const cells = (window: PictureWindow) => ({
       window,
