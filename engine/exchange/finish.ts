@@ -2,6 +2,8 @@ import type { Field, SparseMatrix, Symmetry } from '../matrix/pattern.ts';
 import type { ImportNote, Loaded } from './loaded.ts';
 import { placeTriplets } from './place.ts';
 import type { ReadOptions } from './readOptions.ts';
+import { symmetrised } from './symmetrise.ts';
+import { syntheticMark, withSyntheticValues } from './syntheticValues.ts';
 import type { TripletStore } from './triplets.ts';
 import { valueNotes } from './valueNotes.ts';
 
@@ -18,6 +20,9 @@ export interface FinishRequest {
   readonly rightHandSides: Loaded['rightHandSides'];
 }
 
+/** What is put behind the name of a matrix of which a part is missing, so that every report says so. */
+export const incompleteMark = ' (incomplete)';
+
 /** From the stored entries to what a reader returns: placed, merged, expanded, counted, with the chosen readings applied. */
 export function finishMatrix(store: TripletStore, r: FinishRequest): Loaded {
   const stored = store.count;
@@ -31,10 +36,14 @@ export function finishPlaced(placed: SparseMatrix, stored: number, duplicates: n
   const notes = [...r.notes];
   let matrix = placed;
   if (r.options.imaginary === 'drop-zero' && matrix.field === 'complex') matrix = withoutImaginary(matrix, notes);
+  if (r.options.mirrors === 'average') matrix = symmetrised(r.file, matrix, notes);
   if (r.options.zeros === 'drop') matrix = withoutSmall(matrix, r.options.dropBelow, notes);
+  const made = r.options.values === 'synthetic' && matrix.values === null;
+  if (r.options.values === 'synthetic') matrix = withSyntheticValues(matrix, notes);
   const facts = valueNotes(matrix, r.symmetry, notes);
+  const incomplete = notes.some((n) => n.code === 'incomplete');
   return {
-    name: r.file,
+    name: `${r.file}${incomplete ? incompleteMark : ''}${made ? syntheticMark : ''}`,
     format: r.format,
     matrix,
     storedEntries: stored,

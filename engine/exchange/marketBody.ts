@@ -27,6 +27,7 @@ export function baseOf(options: ReadOptions): 0 | 1 {
 /** The symmetry a file is read with. */
 export function symmetryRead(header: MarketHeader, options: ReadOptions): Symmetry {
   const field = options.field === 'declared' ? header.field : options.field;
+  if (options.mirror === 'general') return 'general';
   const choose = options.mirror !== 'declared' && field === 'complex' && header.symmetry !== 'general';
   return choose
     ? options.mirror
@@ -331,6 +332,7 @@ export class MarketBody implements CoordinateTarget {
     const stored = this.direct?.stored ?? this.store.count;
     this.settleCount(stored);
     this.noteNumbers();
+    this.noteReading();
     const r: FinishRequest = {
       file: this.file,
       format: `Matrix Market ${this.header.layout}`,
@@ -352,6 +354,17 @@ export class MarketBody implements CoordinateTarget {
     const values = this.field === 'pattern' ? null : c.values;
     const { rows, columns, field } = this;
     return finishPlaced({ rows, columns, columnPointer, rowIndex, field, values }, stored, duplicates, { ...r, notes });
+  }
+
+  /** Where the file was read in another way than it declares. */
+  private noteReading(): void {
+    const { header, options } = this;
+    const said: string[] = [];
+    if (options.base === 0) said.push('indices counted from 0');
+    if (this.symmetry !== header.symmetry) said.push(`${this.symmetry} instead of ${header.symmetry}`);
+    if (this.field !== header.field) said.push(`${this.field} instead of ${header.field}`);
+    if (this.array !== null && options.arrayBy === 'rows') said.push('row by row instead of column by column');
+    if (said.length > 0) this.note('read-otherwise', `Read on request as: ${said.join('; ')}.`);
   }
 
   /** Numbers that a double cannot hold. */

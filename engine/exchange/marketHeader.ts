@@ -92,8 +92,12 @@ export class HeaderReader {
       throw this.refuse(
         `banner-${what}`,
         line,
-        `the banner's ${what} is "${word ?? 'missing'}", expected ${known.filter((k) => k !== 'double').join(', ')}.`,
+        `the banner's ${what} is "${quoted(word ?? 'missing')}", expected ${known.filter((k) => k !== 'double').join(', ')}.`,
       );
+    }
+    if (bare !== word) {
+      const rest = (word ?? '').slice(found.length);
+      this.note('banner-extra', `Line ${line}: text behind "${found}" was ignored: "${quoted(rest)}".`);
     }
     return found;
   }

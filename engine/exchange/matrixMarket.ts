@@ -78,9 +78,10 @@ async function countFirst(
       if (header === null) continue;
       declared = header.entries;
       const impossible = source.size !== null && 4 * declared > source.size;
-      const expanded = header.symmetry === 'general' ? declared : 2 * declared;
+      const mirrored = symmetryRead(header, options) !== 'general';
+      const expanded = mirrored ? 2 * declared : declared;
       if (header.layout !== 'coordinate' || declared < least || impossible || expanded > 2 ** 31 - 1) return null;
-      count = new ColumnCount(header.rows, header.columns, baseOf(options), header.symmetry !== 'general');
+      count = new ColumnCount(header.rows, header.columns, baseOf(options), mirrored);
     }
     if (count !== null && at < block.end) count.take(block.bytes, at, block.end);
     if (count?.plain === false) return null;

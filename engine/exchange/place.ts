@@ -1,4 +1,4 @@
-import { Fault } from '../matrix/fault.ts';
+import { Fault, type Repair } from '../matrix/fault.ts';
 import type { Field, SparseMatrix, Symmetry } from '../matrix/pattern.ts';
 import { type Columns, compressTriplets, expandLower, type MirrorRule } from './columns.ts';
 import type { ImportNote } from './loaded.ts';
@@ -114,6 +114,38 @@ function mirrorInPlace(t: TripletStore, rule: MirrorRule): void {
   }
 }
 
+/** Two triangles that contradict the banner: as a general matrix both are taken; complex ones may fit the other banner throughout. */
+function trianglesDiffer(a: Columns, b: Columns, width: 0 | 1 | 2, r: PlaceRequest, i: number, j: number): Fault {
+  const repairs: Repair[] = [];
+  const other = r.symmetry === 'symmetric' ? 'hermitian' : 'symmetric';
+  const fits = width === 2 && r.symmetry !== 'skew-symmetric' && conjugatesThroughout(a, b, other === 'hermitian');
+  if (fits) repairs.push({ id: `read-as-${other}`, text: `Read as complex ${other}: all stored pairs fit that` });
+  repairs.push({ id: 'read-as-general', text: 'Read as general: both triangles as they are' });
+  return new Fault(
+    'input',
+    'triangles-differ',
+    `${r.file}: the banner says ${r.symmetry} and both triangles are stored, but the entries at (${i + 1}, ${j + 1}) and (${j + 1}, ${i + 1}) do not mirror each other.${fits ? ` All stored pairs are ${other === 'hermitian' ? 'conjugates' : 'equal'}, as in a ${other} matrix.` : ''} Store one triangle, or declare the file general.`,
+    { file: r.file, row: i, column: j },
+    repairs,
+  );
+}
+
+/** Whether every pair stored in both triangles (b mirrored by the rule of the banner) is a pair of conjugates; `real`: and the diagonal real. */
+function conjugatesThroughout(a: Columns, b: Columns, real: boolean): boolean {
+  for (let j = 0; j < a.columnPointer.length - 1; j++) {
+    let s = b.columnPointer[j];
+    const sEnd = b.columnPointer[j + 1];
+    for (let p = a.columnPointer[j]; p < a.columnPointer[j + 1]; p++) {
+      const i = a.rowIndex[p];
+      if (real && i === j && a.values[2 * p + 1] !== 0) return false;
+      while (s < sEnd && b.rowIndex[s] < i) s++;
+      if (s === sEnd || b.rowIndex[s] !== i) continue;
+      if (a.values[2 * p] !== b.values[2 * s] || a.values[2 * p + 1] !== -b.values[2 * s + 1]) return false;
+    }
+  }
+  return true;
+}
+
 /** Both triangles are stored: mirror entries that agree are used once, others refuse the file. */
 function mergeTriangles(a: Columns, b: Columns, width: 0 | 1 | 2, r: PlaceRequest, notes: ImportNote[]): Columns {
   const n = r.columns;
@@ -133,17 +165,9 @@ function mergeTriangles(a: Columns, b: Columns, width: 0 | 1 | 2, r: PlaceReques
       if (i1 === i2) {
         both++;
         for (let w = 0; w < width; w++) {
-          if (
-            !Object.is(a.values[p * width + w], b.values[s * width + w]) &&
-            a.values[p * width + w] !== b.values[s * width + w]
-          ) {
-            throw new Fault(
-              'input',
-              'triangles-differ',
-              `${r.file}: the banner says ${r.symmetry} and both triangles are stored, but the entries at (${i1 + 1}, ${j + 1}) and (${j + 1}, ${i1 + 1}) do not mirror each other. Store one triangle, or declare the file general.`,
-              { file: r.file, row: i1, column: j },
-            );
-          }
+          const x = a.values[p * width + w];
+          const y = b.values[s * width + w];
+          if (!Object.is(x, y) && x !== y) throw trianglesDiffer(a, b, width, r, i1, j);
         }
       }
       if (i1 <= i2) p++;

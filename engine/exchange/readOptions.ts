@@ -19,8 +19,8 @@ export interface ReadOptions {
   readonly dropBelow: number;
   /** no banner: refuse and offer, or read as coordinate text */
   readonly banner: 'expected' | 'none';
-  /** complex banner: read symmetric as hermitian or the reverse */
-  readonly mirror: 'declared' | 'symmetric' | 'hermitian';
+  /** complex banner: read symmetric as hermitian or the reverse; any symmetric banner: take both triangles as they are */
+  readonly mirror: 'declared' | 'symmetric' | 'hermitian' | 'general';
   /** field to read instead of the declared one */
   readonly field: 'declared' | 'real' | 'pattern' | 'complex';
   /** array values laid out column by column (the format) or row by row */
@@ -31,6 +31,10 @@ export interface ReadOptions {
   readonly imaginary: 'keep' | 'drop-zero';
   /** plain coordinate text holds all entries, or one triangle of a symmetric matrix */
   readonly storage: 'general' | 'symmetric';
+  /** a general matrix that is symmetric but for rounding: as it is, or (A + Aᵀ)/2 */
+  readonly mirrors: 'keep' | 'average';
+  /** values of a pattern file: none, or made up and labelled so */
+  readonly values: 'declared' | 'synthetic';
   /** which member of an archive, by its name there; null: the only one */
   readonly member: string | null;
 }
@@ -49,6 +53,8 @@ export const defaultReadOptions: ReadOptions = {
   table: 'refuse',
   imaginary: 'keep',
   storage: 'general',
+  mirrors: 'keep',
+  values: 'declared',
   member: null,
 };
 
@@ -65,12 +71,15 @@ const repairSettings: Readonly<Record<string, Partial<ReadOptions>>> = {
   'read-as-1-based': { base: 1 },
   'read-as-hermitian': { mirror: 'hermitian' },
   'read-as-symmetric': { mirror: 'symmetric' },
+  'read-as-general': { mirror: 'general' },
   'read-as-real': { field: 'real' },
   'read-as-pattern': { field: 'pattern' },
   'read-as-complex': { field: 'complex' },
   'read-by-rows': { arrayBy: 'rows' },
   'read-as-node-table': { table: 'node-dof' },
   'use-as-real': { imaginary: 'drop-zero' },
+  symmetrise: { mirrors: 'average' },
+  'synthetic-values': { values: 'synthetic' },
 };
 
 /** Words that `applyRepair` knows. */

@@ -13,12 +13,20 @@ export function valueNotes(
   notes: ImportNote[],
 ): { zeros: number; notFinite: number } | null {
   const { values } = a;
-  if (values === null) return null;
+  if (values === null) {
+    notes.push({
+      code: 'pattern-only',
+      text: 'The file holds positions without values: structure can be analysed, numeric work needs values.',
+      offers: [{ id: 'synthetic-values', text: 'Make up values, labelled synthetic: −1 off a dominant diagonal' }],
+    });
+    return null;
+  }
   const width = a.field === 'complex' ? 2 : 1;
   let zeros = 0;
   let notFinite = 0;
   let imaginary = 0;
   let inexact = 0;
+  let wide = 0;
   const places: number[] = [];
   for (let e = 0, k = 0; e < values.length; e += width, k++) {
     const re = values[e];
@@ -30,7 +38,10 @@ export function valueNotes(
       if (places.length < 5) places.push(k);
     }
     if (im !== 0) imaginary++;
-    if (re >= 9007199254740992 || re <= -9007199254740992) inexact++;
+    if (re >= 2147483648 || re < -2147483648) {
+      wide++;
+      if (re >= 9007199254740992 || re <= -9007199254740992) inexact++;
+    }
   }
   if (zeros > 0) {
     notes.push({
@@ -53,10 +64,10 @@ export function valueNotes(
       offers: [{ id: 'use-as-real', text: 'Use as real: half the memory' }],
     });
   }
-  if (a.field === 'integer' && inexact > 0) {
+  if (a.field === 'integer' && wide > 0) {
     notes.push({
       code: 'large-integers',
-      text: `${inexact} integers are 2^53 or more in modulus; they are held as the nearest double and may have lost their last digits.`,
+      text: `${wide} integers do not fit in 32 bits; all are held as doubles${inexact === 0 ? ', exactly.' : `. ${inexact} of them are 2^53 or more in modulus and may have lost their last digits.`}`,
     });
   }
   if (a.field === 'real' || width === 2) noteFewDigits(values, notes);

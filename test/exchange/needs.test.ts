@@ -1,9 +1,5 @@
 /** The numbered bad and awkward inputs that concern reading: each with its fixture and the response it must get. */
 import { describe, expect, it } from 'vitest';
-import { readDense } from '../../engine/exchange/readDense.ts';
-import { readPermutation } from '../../engine/exchange/readPermutation.ts';
-import { bytesSource } from '../../engine/exchange/source.ts';
-import { difference } from '../../engine/matrix/difference.ts';
 import { codes, dense, faultOf, load, note } from './readSupport.ts';
 
 const head = (field = 'real', symmetry = 'general') => `%%MatrixMarket matrix coordinate ${field} ${symmetry}\n`;
@@ -36,7 +32,11 @@ describe('banner, comments, lines', () => {
       `%%MatrixMarket matrix coordinate real general (from a run)\n${two}`,
       ['banner-extra'],
     ],
-    ['needs 5: a bracket right behind a keyword', `%%MatrixMarket matrix coordinate real general[half]\n${two}`, []],
+    [
+      'needs 5: a bracket right behind a keyword',
+      `%%MatrixMarket matrix coordinate real general[half]\n${two}`,
+      ['banner-extra'],
+    ],
     ['needs 6: CR LF', `${head()}${two}`.replaceAll('\n', '\r\n'), []],
     ['needs 6: lone CR', `${head()}${two}`.replaceAll('\n', '\r'), []],
     ['needs 6: byte-order mark', `\ufeff${head()}${two}`, []],
@@ -130,7 +130,9 @@ describe('numbers of entries', () => {
     expect(fault.message).toMatch(/3 entries declared, 2 found; the file ends in line 4 \(last line cut\)/);
     expect((await faultOf(`${text}\n% more than enough bytes\n`)).message).toMatch(/last line complete/);
     expect(fault.repairs.map((r) => r.id)).toEqual(['use-incomplete']);
-    expect(note(await load(text, ['use-incomplete']), 'incomplete')).toMatch(/Incomplete: 3 entries declared, 2 found/);
+    const incomplete = await load(text, ['use-incomplete']);
+    expect(note(incomplete, 'incomplete')).toMatch(/Incomplete: 3 entries declared, 2 found/);
+    expect(incomplete.name).toBe('m.mtx (incomplete)');
     // from a size that the bytes cannot hold, before reading on
     expect((await faultOf(`${head()}5 5 50000\n1 1 1\n`)).code).toBe('declared-too-many');
   });
@@ -223,7 +225,10 @@ describe('fields and values', () => {
     const loaded = await load(`${head('integer')}2 2 2\n1 1 9007199254740993\n2 2 7\n`);
     expect(loaded.matrix.values?.[0]).toBe(9007199254740992);
     expect(codes(loaded)).toContain('large-integers');
-    expect(codes(await load(`${head('integer')}2 2 2\n1 1 4294967296\n2 2 7\n`))).toEqual([]);
+    expect(note(loaded, 'large-integers')).toMatch(/^1 integers do not fit in 32 bits.*1 of them are 2\^53 or more/);
+    const wide = await load(`${head('integer')}2 2 2\n1 1 4294967296\n2 2 -2147483648\n`);
+    expect(note(wide, 'large-integers')).toBe('1 integers do not fit in 32 bits; all are held as doubles, exactly.');
+    expect(codes(await load(`${head('integer')}1 1 1\n1 1 2147483647\n`))).toEqual([]);
   });
   it('needs 24: few digits', async () => {
     expect(note(await load(`${head()}2 2 2\n1 1 3.14159\n2 2 2.71828\n`), 'few-digits')).toMatch(
@@ -244,6 +249,24 @@ describe('symmetry', () => {
     expect((await faultOf(`${head('real', 'symmetric')}2 2 3\n1 1 1\n2 1 5\n1 2 6\n`)).message).toMatch(
       /line 5:.*\(2, 1\) and \(1, 2\)/,
     );
+  });
+  it('needs 25: triangles that contradict the banner: general, or the other complex symmetry if all pairs fit it', async () => {
+    const differ = `${head('real', 'symmetric')}2 2 3\n1 1 1\n2 1 5\n1 2 6\n`;
+    expect((await faultOf(differ)).repairs.map((r) => r.id)).toEqual(['read-as-general']);
+    const general = await load(differ, ['read-as-general']);
+    expect([dense(general.matrix), general.symmetry, note(general, 'read-otherwise')]).toEqual([
+      [
+        [1, 6],
+        [5, 0],
+      ],
+      'general',
+      'Read on request as: general instead of symmetric.',
+    ]);
+    const conjugates = `${head('complex', 'symmetric')}2 2 3\n1 1 1 0\n2 1 2 3\n1 2 2 -3\n`;
+    expect((await faultOf(conjugates)).repairs.map((r) => r.id)).toEqual(['read-as-hermitian', 'read-as-general']);
+    expect(Array.from((await load(conjugates, ['read-as-hermitian'])).matrix.values ?? [])).toEqual([
+      1, 0, 2, 3, 2, -3,
+    ]);
   });
   it('needs 26: upper triangle stored; Hermitian conjugated accordingly', async () => {
     const upper = await load(`${head('real', 'symmetric')}2 2 2\n1 1 1\n1 2 5\n`);
@@ -297,11 +320,34 @@ describe('symmetry', () => {
     expect(Array.from(loaded.matrix.values ?? [])).toEqual([1, 0, 2, 3, 2, 3]);
     expect(Array.from((await load(text, ['read-as-hermitian'])).matrix.values ?? [])).toEqual([1, 0, 2, 3, 2, -3]);
   });
+  it('needs 31: declared Hermitian, both triangles equal', async () => {
+    const text = `${head('complex', 'hermitian')}2 2 3\n1 1 1 0\n2 1 2 3\n1 2 2 3\n`;
+    expect((await faultOf(text)).repairs.map((r) => r.id)).toEqual(['read-as-symmetric', 'read-as-general']);
+    expect(Array.from((await load(text, ['read-as-symmetric'])).matrix.values ?? [])).toEqual([1, 0, 2, 3, 2, 3]);
+  });
   it('needs 32: complex with all imaginary parts zero', async () => {
     const text = `${head('complex')}1 1 1\n1 1 7 0\n`;
     expect((await load(text)).notes.find((n) => n.code === 'imaginary-zero')?.offers?.[0].id).toBe('use-as-real');
     const real = (await load(text, ['use-as-real'])).matrix;
     expect([real.field, Array.from(real.values ?? [])]).toEqual(['real', [7]]);
+  });
+  it('needs 33: symmetrising on request: the figure is told, the result is symmetric exactly; far from symmetric is refused', async () => {
+    const near = `${head()}2 2 4\n1 1 4\n2 1 1\n1 2 1.0000000000000002\n2 2 4\n`;
+    const loaded = await load(near, ['symmetrise']);
+    expect(note(loaded, 'symmetrised')).toMatch(/differed by up to 2.220446049250313e-16 \(5.55e-17 of.*at \(2, 1\)/);
+    const { values } = (await load(near, ['symmetrise'])).matrix;
+    expect([values?.[1], values?.[0]]).toEqual([values?.[2], 4]);
+    // an entry whose mirror is absent is halved into both places
+    const lone = await load(`${head()}2 2 3\n1 1 4\n2 1 1e-18\n2 2 4\n`, ['symmetrise']);
+    expect(dense(lone.matrix)).toEqual([
+      [4, 5e-19],
+      [5e-19, 4],
+    ]);
+    const hermitian = await load(`${head('complex')}2 2 4\n1 1 4 0\n2 1 1 2\n1 2 1 -2\n2 2 4 1e-17\n`, ['symmetrise']);
+    expect(Array.from(hermitian.matrix.values ?? [])).toEqual([4, 0, 1, 2, 1, -2, 4, 0]);
+    const far = await faultOf(`${head()}2 2 2\n1 1 4\n2 1 1\n`, ['symmetrise']);
+    expect(far.message).toMatch(/line 4: mirror entries differ by up to 1, at \(2, 1\)/);
+    await faultOf(`${head()}2 3 1\n1 1 4\n`, ['symmetrise']);
   });
   it('needs 33: a general file that is symmetric keeps its declaration; the survey measures it', async () => {
     const loaded = await load(`${head()}2 2 2\n1 2 5\n2 1 5\n`);
@@ -353,6 +399,20 @@ describe('entries', () => {
   it('needs 37: a pattern has no values', async () => {
     const loaded = await load(`${head('pattern')}2 2 1\n2 1\n`);
     expect([loaded.matrix.values, loaded.explicitZeros]).toEqual([null, null]);
+    expect(loaded.notes.find((n) => n.code === 'pattern-only')?.offers?.map((o) => o.id)).toEqual(['synthetic-values']);
+  });
+  it('needs 37: synthetic values only on request, labelled in the name; diagonally dominant', async () => {
+    const text = `${head('pattern', 'symmetric')}3 3 5\n1 1\n2 1\n2 2\n3 2\n3 3\n`;
+    const loaded = await load(text, ['synthetic-values']);
+    expect(dense(loaded.matrix)).toEqual([
+      [2, -1, 0],
+      [-1, 3, -1],
+      [0, -1, 2],
+    ]);
+    expect([loaded.name, loaded.matrix.field]).toEqual(['m.mtx (synthetic values)', 'real']);
+    expect(note(loaded, 'synthetic-values')).toMatch(/synthetic.*say nothing about the real system/);
+    const own = await load(head() + two, ['synthetic-values']);
+    expect([own.name, codes(own)]).toEqual(['m.mtx', ['values-kept']]);
   });
   it('needs 38: arrays column by column; rows of values are asked about', async () => {
     const array = (body: string, symmetry = 'general') => `%%MatrixMarket matrix array real ${symmetry}\n2 2\n${body}`;
@@ -387,86 +447,5 @@ describe('entries', () => {
       [0, 0, 0],
       [0, 0, 4],
     ]);
-  });
-});
-
-describe('other files', () => {
-  it('needs 39: Harwell–Boeing content under any name (all originals: boeing.test.ts); faults name line and field', async () => {
-    const card = (a: string) => a.padEnd(72);
-    const hb = `${card('t')}\n             3             1             1             1\nrua                        2             2             2             0\n(3I4)           (2I4)           (2F8.2)\n   1   2   3\n   1   2\n    1.50    2.50\n`;
-    const loaded = await load(hb);
-    expect([loaded.format, dense(loaded.matrix)]).toEqual([
-      'Rutherford–Boeing',
-      [
-        [1.5, 0],
-        [0, 2.5],
-      ],
-    ]);
-    expect((await faultOf(hb.replace('   1   2\n', '   1   7\n'))).message).toMatch(
-      /line 6: a row index is 7; expected 1 to 2/,
-    );
-    expect((await faultOf(hb.replace('   1   2   3', '   1   4   3'))).message).toMatch(
-      /line 5: the pointer of column 2 is 4/,
-    );
-    expect((await faultOf(hb.slice(0, -20))).message).toMatch(/line \d+/);
-    expect((await faultOf(hb.replace('rua', 'rse'))).message).toMatch(/line 3:.*elemental/);
-  });
-  it('needs 40: node, dof, node, dof, value', async () => {
-    const text = '10,1,10,1,5.0\n10,1,3,2,-1.0\n3,2,3,2,4.0\n';
-    const fault = await faultOf(text);
-    expect(fault.repairs.map((r) => r.id)).toEqual(['read-as-node-table']);
-    const loaded = await load(text, ['read-as-node-table']);
-    expect(loaded.labels).toEqual(['node 3 dof 2', 'node 10 dof 1']);
-    expect(dense(loaded.matrix)).toEqual([
-      [4, 0],
-      [-1, 5],
-    ]);
-  });
-  it('needs 42: other formats are named from their first bytes, with a line that writes text', async () => {
-    const seen: [string, string][] = [
-      ['<!DOCTYPE html><html><body>404</body></html>', 'an HTML page'],
-      ['\x89HDF\r\n\x1a\n\0\0', 'an HDF5 container'],
-      ['%PDF-1.4', 'a PDF document'],
-      ['{"a": 1}', 'a JSON file'],
-      ['\0\x01\x02', 'a binary file'],
-    ];
-    for (const [text, what] of seen) {
-      const fault = await faultOf(Uint8Array.from(text, (c) => c.charCodeAt(0)));
-      expect(fault.message).toMatch(`byte 0: this looks like ${what}`);
-      expect(fault.message).toMatch('mmwrite');
-    }
-    expect((await faultOf('time;force\nnoon;much\n')).message).toMatch(/line 1/);
-  });
-  it('needs 43: a file is never one string: chunks of 1 byte give the same matrix (packed files: unpack.test.ts)', async () => {
-    expect((await load(head() + two, [], 1)).matrix).toEqual((await load(head() + two)).matrix);
-  });
-  it('needs 52: permutation files name the first fault (more: permutation.test.ts)', async () => {
-    const read = (text: string) => readPermutation(bytesSource('p', new TextEncoder().encode(text)), 3);
-    await expect(read('1\n3\n3\n')).rejects.toThrow('line 3');
-    expect(await read('1\n3\n2\n')).toMatchObject({ direction: null, base: 1 });
-  });
-  it('needs 53: a second matrix of another pattern: added and missing positions', async () => {
-    const a = (await load(`${head()}2 2 2\n1 1 1\n2 1 1\n`)).matrix;
-    const b = (await load(`${head()}2 2 2\n1 1 1\n2 2 1\n`)).matrix;
-    const d = difference(a, b);
-    expect([d.samePattern, d.added.count, d.missing.count, d.common]).toEqual([false, 1, 1, 1]);
-  });
-  it('needs 54: right-hand sides as array, coordinate and plain text', async () => {
-    const read = (text: string) => readDense(bytesSource('b.txt', new TextEncoder().encode(text), 4));
-    expect(await read('1.5\n2\n3\n')).toEqual({
-      rows: 3,
-      columns: 1,
-      field: 'real',
-      values: Float64Array.of(1.5, 2, 3),
-    });
-    expect(await read('1.5 2\n3 4\n')).toEqual({
-      rows: 2,
-      columns: 2,
-      field: 'real',
-      values: Float64Array.of(1.5, 3, 2, 4),
-    });
-    expect((await read('%%MatrixMarket matrix array real general\n2 1\n1\n2\n')).values).toEqual(Float64Array.of(1, 2));
-    expect((await read(`${head()}3 1 1\n2 1 7\n`)).values).toEqual(Float64Array.of(0, 7, 0));
-    await expect(read('1.5 2\n3\n')).rejects.toThrow('line 2: expected 2 numbers');
   });
 });
