@@ -2,12 +2,13 @@ import { useStore } from 'zustand';
 import type { Pane } from './contract.ts';
 import { mapsStore } from './mapsStore.ts';
 import { paneControls } from './paneControl.ts';
+import { useCalm } from './useCalm.ts';
 import { sayScale } from './words.ts';
 
 /** What the signs mean, always there, and how large a dot is. */
 export function Legend({ panes, drawn }: { panes: readonly Pane[]; drawn: number }) {
   const outlines = useStore(mapsStore, (s) => s.outlines);
-  const viewport = useStore(mapsStore, (s) => s.viewport);
+  const viewport = useCalm((s) => s.viewport);
   const trials = panes.some((p) => p.trial !== null);
   const control = paneControls.get(panes[0].id);
   const scale = drawn < 0 || control === undefined ? null : control.cellSize(viewport);

@@ -5,6 +5,7 @@ import type { Pane } from './contract.ts';
 import { listen } from './input.ts';
 import { marksOn } from './marks.ts';
 import { PaneControl } from './paneControl.ts';
+import type { MapImage } from './paneImages.ts';
 import { sayMap } from './words.ts';
 
 /** Sides of a frame are no further apart than this, however long the matrix. */
@@ -33,9 +34,13 @@ export function MapPane(props: {
 
   useEffect(() => {
     if (canvas.current === null || hand.current === null) return;
+    let seen: { whole: MapImage | null; failed: string | null } = { whole: null, failed: null };
     const told = () => {
       const { whole, failed } = made.images;
-      setState({ words: sayMap(pane.title, rows, columns, whole), failed, ready: whole !== null });
+      if (whole !== seen.whole || failed !== seen.failed) {
+        seen = { whole, failed };
+        setState({ words: sayMap(pane.title, rows, columns, whole), failed, ready: whole !== null });
+      }
       calls.current.onDrawn();
     };
     const made = new PaneControl(canvas.current, pane, rows, columns, told);

@@ -1,4 +1,4 @@
-import { useEffect, useState } from 'react';
+import { useCallback, useEffect, useRef, useState } from 'react';
 import { askWhy } from './ask.ts';
 import type { MapsProps } from './contract.ts';
 import { placeOf } from './ground.ts';
@@ -14,6 +14,15 @@ const ask = () => void askWhy();
 export function Maps({ name, panes, rows, columns, pointing }: MapsProps) {
   const [frontId, setFront] = useState(panes[panes.length - 1].id);
   const [drawn, setDrawn] = useState(0);
+  const soon = useRef(0);
+  // many images come while the hand moves: the words beside the maps hear of them together
+  const onDrawn = useCallback(() => {
+    if (soon.current !== 0) return;
+    soon.current = window.setTimeout(() => {
+      soon.current = 0;
+      setDrawn((k) => k + 1);
+    }, 120);
+  }, []);
   const front = panes.some((p) => p.id === frontId) ? frontId : panes[panes.length - 1].id;
   const { matrix } = panes[0];
 
@@ -62,7 +71,7 @@ export function Maps({ name, panes, rows, columns, pointing }: MapsProps) {
             pointing={pointing}
             front={pane.id === front}
             onAsk={ask}
-            onDrawn={() => setDrawn((k) => k + 1)}
+            onDrawn={onDrawn}
           />
         ))}
       </div>

@@ -2,13 +2,14 @@ import { useStore } from 'zustand';
 import { exactly } from '../figures/format.ts';
 import type { Spot } from '../workers/mapOperations.ts';
 import { mapsStore } from './mapsStore.ts';
+import { useCalm } from './useCalm.ts';
 import { type Reading, useReading } from './useReading.ts';
 import { sayCell, sayPath, saySpot, span } from './words.ts';
 
 /** What lies under the crosshair, in the margin of the sheet: always in the same place. */
 export function ReadingOf({ drawn, onAsk }: { drawn: number; onAsk: () => void }) {
   const reading = useReading(drawn);
-  const pinned = useStore(mapsStore, (s) => s.pinned);
+  const pinned = useCalm((s) => s.pinned);
   const path = useStore(mapsStore, (s) => s.path);
   if (reading === null) {
     return (

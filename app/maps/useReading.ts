@@ -1,10 +1,10 @@
 import { useEffect, useState } from 'react';
-import { useStore } from 'zustand';
 import { pool } from '../state/vault.ts';
 import type { Spot } from '../workers/mapOperations.ts';
 import type { CellFacts } from './draw.ts';
-import { type MapCursor, mapsStore } from './mapsStore.ts';
+import type { MapCursor } from './mapsStore.ts';
 import { type PaneControl, paneControls } from './paneControl.ts';
+import { useCalm } from './useCalm.ts';
 
 /** What the crosshair stands on. */
 export interface Reading {
@@ -22,7 +22,7 @@ const restBeforeAsking = 60;
 
 /** Follows the crosshair. `drawn` counts up with every new image, so that a cell known only now is read too. */
 export function useReading(drawn: number): Reading | null {
-  const cursor = useStore(mapsStore, (s) => s.cursor);
+  const cursor = useCalm((s) => s.cursor);
   const [asked, setAsked] = useState<{ cursor: MapCursor; spot: Spot } | null>(null);
   const control = cursor === null ? undefined : paneControls.get(cursor.pane);
   const single = cursor !== null && control !== undefined && isSingle(control.facts(cursor));

@@ -26,7 +26,7 @@ async function writeGrid(path: string, k: number): Promise<void> {
       if (column + 1 < k) text += `${j + 1} ${j} -1\n`;
       if (row + 1 < k) text += `${j + k} ${j} -1\n`;
     }
-    if (!out.write(text)) await new Promise((ready) => out.once('drain', ready));
+    if (!out.write(text)) await new Promise<void>((ready) => out.once('drain', () => ready()));
   }
   await new Promise<void>((done) => out.end(() => done()));
 }
@@ -98,7 +98,10 @@ async function main(): Promise<void> {
       .split(delimiter)
       .map((at) => join(at, 'chromium'))
       .find((path) => existsSync(path));
-    browser = await chromium.launch({ executablePath, args: ['--no-sandbox', '--disable-gpu'] });
+    browser = await chromium.launch({
+      ...(executablePath === undefined ? {} : { executablePath }),
+      args: ['--no-sandbox', '--disable-gpu'],
+    });
     const page = await browser.newPage({ viewport: { width: 1280, height: 800 } });
     await page.goto(`http://localhost:${port}/`);
     await page.locator('input[type="file"]').first().setInputFiles(file);
