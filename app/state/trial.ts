@@ -52,7 +52,17 @@ export function letterOf(k: number): string {
 export function choiceKey(choice: Choice, heldLast: readonly number[]): string {
   const c = choice;
   const threshold = c.pivoting === 'threshold' ? c.threshold : '';
-  return [c.ordering, c.factorization, c.pivoting, threshold, c.scaling, c.matching, c.blocks, c.seed, heldLast].join(
-    '|',
-  );
+  const details = JSON.stringify([c.tuning, c.relabelling, c.ordering === 'best-of' ? c.portfolio : null]);
+  return [
+    c.ordering,
+    c.factorization,
+    c.pivoting,
+    threshold,
+    c.scaling,
+    c.matching,
+    c.blocks,
+    c.seed,
+    details,
+    heldLast,
+  ].join('|');
 }

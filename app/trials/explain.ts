@@ -42,6 +42,7 @@ export const orderings: Readonly<Record<OrderingName, Said>> = {
     means: 'Orders columns for row interchanges still unknown: works on AᵀA without forming it.',
   },
   imported: { name: 'imported', means: 'A permutation you have dropped, exactly as it stands.' },
+  'best-of': { name: 'best of several', means: 'Runs several orderings and keeps the best by one measure.' },
 };
 
 export const factorizations: Readonly<Record<FactorizationName, Said>> = {

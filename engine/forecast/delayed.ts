@@ -1,6 +1,5 @@
-import type { FactorKind } from '../symbolic/operations.ts';
+import { type Arithmetic, denseOperations, type FactorKind } from '../symbolic/operations.ts';
 import type { AssemblyTree } from '../symbolic/types.ts';
-import { frontOperations } from './frontWork.ts';
 
 /** What a factorization costs when a share of the pivots is handed up once. Modelled. */
 export interface DelayedRow {
@@ -8,6 +7,14 @@ export interface DelayedRow {
   readonly share: number;
   readonly storedFactorEntries: number;
   readonly operations: number;
+  /** factor panels: scalars, one index list for each front */
+  readonly bytes: number;
+}
+
+/** Widths in bytes. */
+interface EntryWidths {
+  readonly valueBytes: number;
+  readonly indexBytes: number;
 }
 
 /**
@@ -17,12 +24,15 @@ export interface DelayedRow {
 export function delayedGrowth(
   kind: FactorKind,
   tree: AssemblyTree,
+  arithmetic: Arithmetic = 'real',
+  { valueBytes, indexBytes }: EntryWidths = { valueBytes: 8, indexBytes: 4 },
   shares: readonly number[] = [0, 0.01, 0.05, 0.2],
 ): readonly DelayedRow[] {
   return shares.map((share) => {
     const extra = new Int32Array(tree.count);
     let stored = 0;
     let operations = 0;
+    let subscripts = 0;
     for (let s = 0; s < tree.count; s++) {
       const planned = tree.firstColumn[s + 1] - tree.firstColumn[s] + extra[s];
       const m = tree.frontOrder[s] + extra[s];
@@ -31,8 +41,9 @@ export function delayedGrowth(
       if (tree.parent[s] >= 0) extra[tree.parent[s]] += handed;
       const half = p * m - (p * (p - 1)) / 2;
       stored += kind === 'lu' ? 2 * half - p : half;
-      operations += frontOperations(kind, m, p);
+      operations += denseOperations(kind, m, p, arithmetic);
+      subscripts += m;
     }
-    return { share, storedFactorEntries: stored, operations };
+    return { share, storedFactorEntries: stored, operations, bytes: valueBytes * stored + indexBytes * subscripts };
   });
 }

@@ -5,8 +5,11 @@
  */
 export type FactorKind = 'cholesky' | 'ldlt' | 'lu';
 
+/** real numbers, complex ones, or complex ones with real pivots (hermitian factorizations) */
+export type Arithmetic = 'real' | 'hermitian' | 'complex';
+
 /** Costs of one scalar operation in real ones. */
-interface ScalarCosts {
+export interface ScalarCosts {
   readonly multiplyAdd: number;
   readonly divideByPivot: number;
 }
@@ -15,6 +18,26 @@ const real: ScalarCosts = { multiplyAdd: 2, divideByPivot: 1 };
 /** pivots of a hermitian factorization are real */
 const hermitian: ScalarCosts = { multiplyAdd: 8, divideByPivot: 2 };
 const complex: ScalarCosts = { multiplyAdd: 8, divideByPivot: 11 };
+
+/** Real operations of one scalar multiply–add and of one division by a pivot. */
+export function scalarCosts(arithmetic: Arithmetic): ScalarCosts {
+  return arithmetic === 'real' ? real : arithmetic === 'hermitian' ? hermitian : complex;
+}
+
+/**
+ * Operations of p pivots in a dense front of order m (p = m: a dense matrix), padding included: the sum of `factorOperations` over columns
+ * with m − 1, m − 2, … m − p off-diagonal entries. Closed form.
+ */
+export function denseOperations(kind: FactorKind, m: number, p: number, arithmetic: Arithmetic = 'real'): number {
+  const costs = scalarCosts(arithmetic);
+  const upTo = (k: number): number => (k * (k + 1)) / 2;
+  const squaresUpTo = (k: number): number => (k * (k + 1) * (2 * k + 1)) / 6;
+  const sum = upTo(m - 1) - upTo(m - p - 1);
+  const squares = squaresUpTo(m - 1) - squaresUpTo(m - p - 1);
+  if (kind === 'lu') return costs.divideByPivot * sum + costs.multiplyAdd * squares;
+  const symmetric = costs.divideByPivot * sum + (costs.multiplyAdd * (squares + sum)) / 2;
+  return kind === 'cholesky' ? symmetric + p : symmetric;
+}
 
 /** Cholesky: Σ cⱼ². */
 export function choleskyOperations(columnCount: Int32Array): number {
@@ -30,10 +53,10 @@ export function choleskyOperations(columnCount: Int32Array): number {
 export function factorOperations(
   kind: FactorKind,
   lower: Int32Array,
-  arithmetic: 'real' | 'hermitian' | 'complex' = 'real',
+  arithmetic: Arithmetic = 'real',
   upper: Int32Array = lower,
 ): number {
-  const costs = arithmetic === 'real' ? real : arithmetic === 'hermitian' ? hermitian : complex;
+  const costs = scalarCosts(arithmetic);
   let sum = 0;
   for (let j = 0; j < lower.length; j++) {
     const l = lower[j] - 1;

@@ -3,10 +3,13 @@ import { type Graph, graphOf } from '../graph/graph.ts';
 import { entryCount, type Pattern, type SparseMatrix } from '../matrix/pattern.ts';
 import type { Progress } from '../matrix/progress.ts';
 import { transposePattern } from '../matrix/transpose.ts';
+import { heldFlags } from '../ordering/heldLast.ts';
+import { structuralPairs } from '../ordering/saddle.ts';
 import type { Effect } from '../prepare/effect.ts';
 import { prepare } from '../prepare/prepare.ts';
 import type { Choice } from './choice.ts';
 import type { TrialContext } from './context.ts';
+import { zeroDiagonals } from './zeroDiagonal.ts';
 
 /** What was decided from the values before ordering; the numeric run takes it over. Vectors are in the original numbering. */
 export interface TrialPlan {
@@ -22,6 +25,16 @@ export interface TrialPlan {
   readonly effect: Effect | null;
 }
 
+/** Nothing decided. */
+export const emptyPlan: TrialPlan = {
+  plannedRow: null,
+  partner: null,
+  rowScaling: null,
+  columnScaling: null,
+  blockStart: null,
+  effect: null,
+};
+
 /** Runs the preparations of a choice. Nothing asked for: nothing done. */
 export function planOf(
   context: TrialContext,
@@ -29,25 +42,26 @@ export function planOf(
   progress: Progress,
 ): { plan: TrialPlan; valueDependent: boolean; notes: readonly string[] } {
   const none = choice.matching === 'none' && choice.scaling === 'none';
-  if (none) {
-    const plan = {
-      plannedRow: null,
-      partner: null,
-      rowScaling: null,
-      columnScaling: null,
-      blockStart: null,
-      effect: null,
-    };
-    return { plan, valueDependent: false, notes: [] };
-  }
+  if (none) return { plan: emptyPlan, valueDependent: false, notes: [] };
   const symmetric = choice.factorization === 'cholesky' || choice.factorization === 'ldlt';
   const done = prepare(
     context.input.matrix,
     { scaling: choice.scaling, matching: choice.matching, symmetric },
     progress,
   );
-  const { plannedRow, partner, rowScaling, columnScaling, effect, valueDependent, notes } = done;
+  const { plannedRow, rowScaling, columnScaling, effect, notes } = done;
+  const structural = symmetric && choice.matching === 'structural' ? pairsByStructure(context) : null;
+  const partner = structural?.partner ?? done.partner;
+  const valueDependent = done.valueDependent || (structural?.fromValues ?? false);
   return { plan: { plannedRow, partner, rowScaling, columnScaling, blockStart: null, effect }, valueDependent, notes };
+}
+
+/** Zero diagonals with a partner each; a diagonal that is stored as zero is known from the values only. */
+function pairsByStructure(context: TrialContext): { partner: Int32Array; fromValues: boolean } {
+  const { matrix, heldLast } = context.input;
+  const { zero, stored } = zeroDiagonals(matrix);
+  const held = heldFlags(matrix.columns, heldLast ?? undefined);
+  return { partner: structuralPairs(context.graph(), zero, held), fromValues: stored > 0 };
 }
 
 /** The pattern with its rows renumbered by the column they are planned for: planned pivots on the diagonal. */

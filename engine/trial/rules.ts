@@ -1,4 +1,4 @@
-import type { Choice, FactorizationName, OrderingName } from './choice.ts';
+import type { Choice, FactorizationName, OrderingName, OrderingTuning, Portfolio } from './choice.ts';
 
 /** The facts of a matrix that decide what can be done with it. */
 export interface MatrixFacts {
@@ -46,6 +46,12 @@ export function whyNoForecast(facts: MatrixFacts, choice: Choice): string | null
     return 'Geometric dissection needs the coordinates of the mesh nodes: drop their file beside the matrix.';
   }
   if (choice.ordering === 'imported' && !facts.hasImported) return 'No permutation has been read yet.';
+  if (choice.ordering === 'best-of') {
+    const why = whyNoPortfolio(facts, choice);
+    if (why !== null) return why;
+  }
+  const tuning = whyNoTuning(choice.tuning);
+  if (tuning !== null) return tuning;
   if (choice.factorization === 'cholesky' && choice.pivoting !== 'none')
     return 'Cholesky takes its pivots in order: pivoting is none.';
   if (choice.factorization === 'ldlt' && choice.pivoting === 'threshold' && choice.threshold > 0.5) {
@@ -63,6 +69,41 @@ export function whyNoForecast(facts: MatrixFacts, choice: Choice): string | null
   }
   if (choice.factorization === 'cholesky' && choice.matching !== 'none')
     return 'A Cholesky factorization needs no matching.';
+  if (
+    choice.factorization === 'ldlt' &&
+    choice.matching === 'large-entry' &&
+    !facts.valueSymmetric &&
+    !facts.hermitian
+  ) {
+    return 'Pairs by magnitude need A = Aᵀ or A = Aᴴ; pairs by structure need only the pattern.';
+  }
+  return null;
+}
+
+function whyNoPortfolio(facts: MatrixFacts, choice: Choice): string | null {
+  const { members, measure, rounds, timeLimit } = choice.portfolio;
+  if (choice.factorization === 'column-lu' && measure === 'critical-path') {
+    return 'Column LU has no fronts, so no critical path: let the portfolio be judged by entries, operations or peak memory.';
+  }
+  if (!(Number.isInteger(rounds) && rounds >= 1 && rounds <= 1000)) return 'A portfolio takes 1 to 1000 rounds.';
+  if (timeLimit !== null && !(timeLimit >= 0)) return 'A time limit is a number of seconds, 0 or more.';
+  if (members === null) return null;
+  if (members.length === 0) return 'A portfolio needs at least one ordering.';
+  if (members.includes('best-of')) return 'A portfolio cannot hold another one.';
+  for (const ordering of members) {
+    const why = whyNoForecast(facts, { ...choice, ordering });
+    if (why !== null) return why;
+  }
+  return null;
+}
+
+function whyNoTuning({ leafSize, balance, tries, denseThreshold }: OrderingTuning): string | null {
+  const whole = (x: number | null, low: number, high: number): boolean =>
+    x === null || (Number.isInteger(x) && x >= low && x <= high);
+  if (!whole(leafSize, 1, 2 ** 31)) return 'Leaf size is a whole number of at least 1.';
+  if (balance !== null && !(balance >= 0.5 && balance <= 0.9)) return 'Balance lies between 0.5 and 0.9.';
+  if (!whole(tries, 1, 1000)) return 'The number of tries is a whole number from 1 to 1000.';
+  if (!whole(denseThreshold, 0, 2 ** 31)) return 'The threshold of dense rows is a whole number of at least 0.';
   return null;
 }
 
@@ -86,11 +127,14 @@ export function whyNoProof(facts: MatrixFacts, choice: Choice): string | null {
   return null;
 }
 
-const rectangularOrderings: readonly OrderingName[] = ['natural', 'column-minimum-degree', 'imported'];
+const rectangularOrderings: readonly OrderingName[] = ['natural', 'column-minimum-degree', 'imported', 'best-of'];
 
 function nameOf(factorization: FactorizationName): string {
   return { cholesky: 'Cholesky', ldlt: 'LDLᵀ', lu: 'LU', 'column-lu': 'column LU' }[factorization];
 }
+
+const defaultTuning: OrderingTuning = { leafSize: null, balance: null, tries: null, denseThreshold: null };
+const defaultPortfolio: Portfolio = { members: null, measure: 'operations', rounds: 1, timeLimit: null };
 
 /** A choice with the defaults of its factorization; what is given in `changes` stands. */
 export function defaultChoice(
@@ -109,14 +153,19 @@ export function defaultChoice(
     matching: 'none',
     blocks: factorization === 'column-lu',
     seed: 1,
+    tuning: defaultTuning,
+    relabelling: null,
+    portfolio: defaultPortfolio,
     ...changes,
   };
 }
 
-/** Orderings that suit a matrix and a factorization, in the order in which they are tried. */
+/** Orderings that suit a matrix and a factorization, in the order in which they are tried; "best-of" runs several of them and is not among them. */
 export function suitableOrderings(facts: MatrixFacts, factorization: FactorizationName): readonly OrderingName[] {
-  if (facts.rows !== facts.columns) return ['natural', 'column-minimum-degree'];
-  const out: OrderingName[] = ['natural', 'reverse-cuthill-mckee'];
+  if (facts.rows !== facts.columns) {
+    return facts.hasImported ? ['natural', 'column-minimum-degree', 'imported'] : ['natural', 'column-minimum-degree'];
+  }
+  const out: OrderingName[] = ['natural', 'reverse-cuthill-mckee', 'sloan'];
   out.push('minimum-degree', 'minimum-fill', 'nested-dissection');
   if (factorization === 'column-lu') out.push('column-minimum-degree');
   if (facts.hasCoordinates) out.push('geometric-dissection');
