@@ -15,7 +15,7 @@ import { type ByteSource, firstBytes } from './source.ts';
 const mostDoubles = 2 ** 27;
 
 /**
- * Reads right-hand sides: any matrix file (Matrix Market array or coordinate), or plain text with one row a line.
+ * Reads right-hand sides: any matrix file (Matrix Market array or coordinate), or plain text with one row a line, a line of column names at most before it.
  * @throws Fault naming the line
  */
 export async function readDense(
@@ -56,6 +56,7 @@ async function plainRows(source: ByteSource, progress: ReadProgress): Promise<De
   const { name: file } = source;
   let columns = 0;
   let rows = 0;
+  let headed = false;
   let byRows = new Float64Array(1024);
   const refuse = (code: string, line: number, text: string) =>
     new Fault('input', code, `${file}, line ${line}: ${text}`, { file, line });
@@ -63,7 +64,14 @@ async function plainRows(source: ByteSource, progress: ReadProgress): Promise<De
     const text = lineText(bytes, from, to).trim();
     if (text === '' || /^(%|#|\/\/)/.test(text)) return true;
     const words = text.split(/\s*[,;]\s*|\s+/);
-    if (rows === 0) columns = words.length;
+    if (rows === 0) {
+      // a line of column names may stand first
+      if (!headed && words.every((w) => wordNumber(w) === undefined && /[a-z_]/i.test(w))) {
+        headed = true;
+        return true;
+      }
+      columns = words.length;
+    }
     if (words.length !== columns)
       throw refuse('field-count', line, `expected ${columns} numbers as in the lines before, found ${words.length}.`);
     if ((rows + 1) * columns > mostDoubles) throw tooLarge(file, line, (rows + 1) * columns);

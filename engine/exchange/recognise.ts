@@ -100,7 +100,7 @@ function roleByName(name: string): Recognised['role'] | null {
 function plain(text: string, name: string): Recognised {
   const lines = text.split(/\r\n|\n|\r/).filter((l) => l.trim() !== '' && !/^\s*(%|#|\/\/)/.test(l));
   if (text.length >= 1 << 14 && lines.length > 1) lines.pop();
-  const number = /^[+-]?(\d+\.?\d*|\.\d+)([ed][+-]?\d+)?$/i;
+  const number = /^[+-]?((\d+\.?\d*|\.\d+)([ed][+-]?\d+)?|nan|inf(inity)?)$/i;
   const rows = lines.slice(0, 200).map((l) => l.trim().split(/\s*[,;]\s*|\s+/));
   const start = rows.length > 1 && rows[0].some((w) => /[a-z_]/i.test(w) && !number.test(w)) ? 1 : 0;
   const body = rows.slice(start);

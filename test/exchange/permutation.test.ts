@@ -61,4 +61,28 @@ describe('permutation files', () => {
     expect(await read('2 0 1', 3)).toMatchObject({ direction: null, base: 0 });
     expect(await read('# mine\n3,1,2', 3)).toMatchObject({ direction: null, base: 1 });
   });
+
+  it('two vectors in one file: one that counts the lines is left out, else the user says which (needs 52)', async () => {
+    expect(await read('1 2\n2 3\n3 1\n', 3)).toMatchObject({
+      values: Int32Array.of(1, 2, 0),
+      notes: ['The first column only counts the lines and was left out.'],
+    });
+    const choose = (text: string, vector: 1 | 2) =>
+      readPermutation(bytesSource('p.txt', new TextEncoder().encode(text)), 3, { base: 'detect', vector });
+    for (const text of [
+      '2 3\n3 1\n1 2\n',
+      '2\n3\n1\n3\n1\n2\n',
+      '%%MatrixMarket matrix array integer general\n3 2\n2\n3\n1\n3\n1\n2\n',
+    ]) {
+      const refused = await read(text, 3).catch((fault) => fault);
+      expect(refused.message).toMatch(/line \d+: the file holds 6 numbers, two vectors of 3/);
+      expect(refused.repairs.map((r: { id: string }) => r.id)).toEqual([
+        'permutation-vector=1',
+        'permutation-vector=2',
+      ]);
+      expect((await choose(text, 1)).values).toEqual(Int32Array.of(1, 2, 0));
+      expect((await choose(text, 2)).values).toEqual(Int32Array.of(2, 0, 1));
+    }
+    await expect(read('1\n2\n3\n1\n2\n3\n1\n', 3)).rejects.toThrow('line 7: more than 3');
+  });
 });
