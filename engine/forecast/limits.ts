@@ -6,10 +6,14 @@ export interface LimitLine {
 }
 
 export interface LimitQuestion {
-  /** entries of each factor, highest end of the range where there is one */
+  /** entries of the factors: exact, or expected */
   readonly largestCount: number;
+  /** proven high end of that count where pivots can move it; null else */
+  readonly highestCount: number | null;
   /** bytes needed at the peak, on the target */
   readonly peakBytes: number;
+  /** modelled bytes where many pivots are delayed; null where none can be */
+  readonly delayedBytes: number | null;
   readonly memoryBytes: number;
   /** bytes a run in this page would take */
   readonly pagePeakBytes: number;
@@ -23,20 +27,28 @@ const gib = (bytes: number): string => `${(bytes / 2 ** 30).toPrecision(3)} GiB`
 export function limitLines(q: LimitQuestion): readonly LimitLine[] {
   const counts = q.largestCount <= 2 ** 31 - 1;
   const fits = q.peakBytes <= q.memoryBytes;
+  const highest =
+    q.highestCount !== null && q.highestCount > 2 ** 31 - 1
+      ? `; the proven worst case of pivoting, ${q.highestCount.toLocaleString('en-US')}, would pass them`
+      : '';
+  const delayed =
+    q.delayedBytes !== null && q.delayedBytes > q.memoryBytes
+      ? ` With a fifth of the pivots delayed it would need ${gib(q.delayedBytes)} (modelled) and would not.`
+      : '';
   const page = q.pagePeakBytes <= q.pageMemoryBytes;
   return [
     {
       question: 'Do counts exceed 2³¹ − 1?',
       passed: counts,
       sentence: counts
-        ? `No: the largest count is ${q.largestCount.toLocaleString('en-US')}; 32-bit indices are enough.`
+        ? `No: the largest count is ${q.largestCount.toLocaleString('en-US')}; 32-bit pointers are enough${highest}.`
         : `Yes: a count reaches ${q.largestCount.toLocaleString('en-US')}; the solver needs 64-bit pointers.`,
     },
     {
       question: 'Does it fit the target’s memory?',
       passed: fits,
       sentence: fits
-        ? `Yes: it needs ${gib(q.peakBytes)} of ${gib(q.memoryBytes)}.`
+        ? `Yes: it needs ${gib(q.peakBytes)} of ${gib(q.memoryBytes)}.${delayed}`
         : `No: it needs ${gib(q.peakBytes)}, the target has ${gib(q.memoryBytes)}.`,
     },
     {

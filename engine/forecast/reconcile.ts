@@ -1,3 +1,5 @@
+import type { FactorKind } from '../symbolic/operations.ts';
+
 /** Which convention explains figures that another solver reported. */
 export interface OwnCounts {
   readonly size: number;
@@ -8,9 +10,13 @@ export interface OwnCounts {
   readonly upperEntries: number | null;
   /** with padding; null without fronts */
   readonly storedFactorEntries: number | null;
+  readonly kind: FactorKind;
+  /** as in `factorOperations` */
   readonly operations: number;
   readonly paddedOperations: number | null;
   readonly complex: boolean;
+  /** bytes of whole layouts, by name, for what is not entries times a width: panels, stacks, peaks */
+  readonly layouts: readonly (readonly [string, number])[];
 }
 
 export interface Explanation {
@@ -43,13 +49,21 @@ function entryReadings(c: OwnCounts): [string, number][] {
 }
 
 function operationReadings(c: OwnCounts): [string, number][] {
-  const real = c.complex ? 4 : 1;
+  const divisions = c.lowerEntries - c.size;
+  const roots = c.kind === 'cholesky' ? c.size : 0;
+  // exact for real numbers; of complex ones the divisions, a small share, are taken at the mean of their two costs
+  const multiplyAdds = (c.operations - roots - (c.complex ? 6.5 : 1) * divisions) / (c.complex ? 8 : 2);
+  const scalar = 2 * multiplyAdds + divisions + roots;
   const out: [string, number][] = [
-    ['operations, addition and multiplication as two', c.operations],
-    ['operations, multiply–add as one', c.operations / 2],
-    ['operations of an LU on the same pattern', 2 * c.operations],
+    ['operations, addition and multiplication as two', scalar],
+    ['multiply–adds, each as one', multiplyAdds],
+    ['multiplications and divisions', multiplyAdds + divisions],
   ];
-  if (c.complex) out.push(['complex operations', c.operations / real], ['complex multiply–adds', c.operations / 8]);
+  if (c.complex) out.push(['operations in real ones', c.operations]);
+  if (c.kind !== 'lu') {
+    // Σ l(1 + 2l) over the columns, from Σ l and Σ l(l + 1)/2 of the symmetric factor
+    out.push(['operations of an LU on the same pattern', 4 * multiplyAdds - divisions]);
+  }
   if (c.paddedOperations !== null) {
     out.push(['operations with padding', c.paddedOperations], ['multiply–adds with padding', c.paddedOperations / 2]);
   }
@@ -57,7 +71,7 @@ function operationReadings(c: OwnCounts): [string, number][] {
 }
 
 function byteReadings(c: OwnCounts): [string, number][] {
-  const out: [string, number][] = [];
+  const out: [string, number][] = c.layouts.map(([word, bytes]) => [word, bytes]);
   for (const [word, entries] of entryReadings(c)) {
     for (const value of c.complex ? [16, 8] : [8, 4]) {
       for (const index of [4, 8, 0]) {

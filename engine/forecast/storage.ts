@@ -25,7 +25,7 @@ export interface StorageQuestion {
   readonly tree: AssemblyTree | null;
   readonly layout: Layout;
   /** how far the counts themselves are certain */
-  readonly kind: 'exact' | 'bound';
+  readonly kind: 'exact' | 'bound' | 'modelled';
 }
 
 /** Bytes in several layouts. */

@@ -5,6 +5,7 @@ import { assemblyTree } from '../symbolic/assemblyTree.ts';
 import type { AssemblyTree, SymbolicFactor } from '../symbolic/types.ts';
 import type { TrialContext } from './context.ts';
 import type { TrialResult } from './result.ts';
+import { arithmeticOf } from './run.ts';
 
 /** The assembly tree of a finished trial on fronts; null for column LU. Near-linear in columns. */
 export function treeOf(context: TrialContext, trial: TrialResult): AssemblyTree | null {
@@ -20,6 +21,16 @@ export function treeOf(context: TrialContext, trial: TrialResult): AssemblyTree 
     largestFront: trial.counts.largestFront ?? 0,
   };
   return assemblyTree(symbolic, { held: context.input.heldLast?.length ?? 0 });
+}
+
+/**
+ * How certain the counts of a trial are: exact from the pattern, on fronts until a pivot is delayed; the count without interchanges, which
+ * stands for column LU with row interchanges, is a model of it, and where that count passed its work limit a bound for diagonal pivots.
+ */
+export function countKindOf({ choice, counts }: TrialResult): 'exact' | 'bound' | 'modelled' {
+  if (choice.factorization !== 'column-lu') return 'exact';
+  if (counts.reasons.expected !== undefined) return 'bound';
+  return choice.pivoting === 'threshold' ? 'modelled' : 'exact';
 }
 
 /**
@@ -50,16 +61,17 @@ export function forecastTrial(
   return forecastOf({
     kind,
     pivoting: choice.pivoting === 'threshold',
-    complex: facts.complex,
+    arithmetic: arithmeticOf(context, kind),
     size: facts.columns,
     matrixEntries: facts.entries,
     lowerEntries: counts.lowerEntries,
     upperEntries: counts.upperEntries,
-    highestEntries: counts.range?.factorEntries[1] ?? counts.factorEntries,
+    factorEntries: counts.factorEntries,
+    highestEntries: choice.pivoting === 'threshold' ? (counts.range?.factorEntries[1] ?? null) : null,
     envelope: counts.envelope,
     operations: counts.operations,
     tree,
-    countKind: choice.factorization === 'column-lu' ? 'bound' : 'exact',
+    countKind: countKindOf(trial),
     target,
     pagePeakBytes: page,
     pageMemoryBytes,

@@ -129,7 +129,8 @@ export function whyNoProof(facts: MatrixFacts, choice: Choice): string | null {
 
 const rectangularOrderings: readonly OrderingName[] = ['natural', 'column-minimum-degree', 'imported', 'best-of'];
 
-function nameOf(factorization: FactorizationName): string {
+/** A factorization as it is said. */
+export function nameOf(factorization: FactorizationName): string {
   return { cholesky: 'Cholesky', ldlt: 'LDLᵀ', lu: 'LU', 'column-lu': 'column LU' }[factorization];
 }
 

@@ -237,9 +237,11 @@ describe('reconcile', () => {
     lowerEntries: 1234,
     upperEntries: null,
     storedFactorEntries: 1300,
+    kind: 'cholesky' as const,
     operations: 50_000,
     paddedOperations: 52_000,
     complex: false,
+    layouts: [['panels', 17_000]] as const,
   };
 
   it('finds the convention that explains a figure, or none', () => {
@@ -247,7 +249,10 @@ describe('reconcile', () => {
       convention: 'entries of L and U, one diagonal',
       distance: 0,
     });
-    expect(reconcile('operations', 25_000, [own])[0].convention).toContain('multiply–add as one');
+    // Cholesky: n roots, l − n divisions, the rest multiply–adds
+    expect(reconcile('operations', (50_000 - 1234) / 2, [own])[0].convention).toContain('multiply–adds, each as one');
+    expect(reconcile('operations', 50_000, [own])[0].convention).toContain('as two');
+    expect(reconcile('bytes', 17_000, [own])[0].convention).toBe('panels');
     expect(reconcile('bytes', 1234 * 12, [own])[0].convention).toContain('8-byte values and 4-byte indices');
     expect(reconcile('entries', 777, [own])).toEqual([]);
   });
