@@ -30,6 +30,27 @@ const permutationBase: OptionRule = {
   words: ['0', '1'],
   help: 'base of the permutation file; default detected',
 };
+const permutationVector: OptionRule = {
+  kind: 'word',
+  words: ['1', '2'],
+  help: 'which of two vectors in the permutation file: left or first, right or second',
+};
+const coordinates: OptionRule = {
+  kind: 'text',
+  value: 'FILE',
+  help: 'coordinates of the mesh nodes, one node a line, for geometric dissection',
+};
+const out: OptionRule = { kind: 'text', value: 'FILE', help: 'file to write' };
+const format: OptionRule = {
+  kind: 'word',
+  words: ['matrix-market', 'rutherford-boeing'],
+  help: 'format of the file; default matrix-market',
+};
+const storage: OptionRule = {
+  kind: 'word',
+  words: ['full', 'half'],
+  help: 'all entries, or one triangle of a matrix that is symmetric exactly; default full',
+};
 const held: OptionRule = {
   kind: 'text',
   value: 'FILE',
@@ -43,6 +64,8 @@ const trialOptions: Readonly<Record<string, OptionRule>> = {
   permutation,
   'permutation-direction': permutationDirection,
   'permutation-base': permutationBase,
+  'permutation-vector': permutationVector,
+  coordinates,
   pivoting: {
     kind: 'word',
     words: pivotingNames,
@@ -117,5 +140,29 @@ export const commands: readonly CommandRule[] = [
       'memory-limit': { kind: 'number', low: 0, value: 'BYTES', help: 'refuse a run that needs more by its forecast' },
       json,
     },
+  },
+  {
+    name: 'convert',
+    help: 'writes the matrix as read: sorted, duplicates summed, full or half, in either format',
+    files: [1, 1],
+    options: { out, format, storage, read },
+  },
+  {
+    name: 'combine',
+    help: 'writes a sum of matrices with real or complex coefficients, on the union of their patterns',
+    files: [1, 99],
+    options: {
+      coefficients: { kind: 'list', value: 'a,b,c', help: 'one number for each file, like 1,-0.5,0.25-2i' },
+      out,
+      format,
+      storage,
+      read,
+    },
+  },
+  {
+    name: 'difference',
+    help: 'what the second matrix has that the first has not, and the other way round; whether an analysis can be used again',
+    files: [2, 2],
+    options: { json, read },
   },
 ];

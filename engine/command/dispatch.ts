@@ -2,6 +2,7 @@ import { Fault } from '../matrix/fault.ts';
 import { commands } from './commands.ts';
 import { compareCommand } from './compareCommand.ts';
 import { factorCommand } from './factorCommand.ts';
+import { combineCommand, convertCommand, differenceCommand } from './matrixCommands.ts';
 import { orderCommand } from './orderCommand.ts';
 import type { Output } from './output.ts';
 import { type Call, helpText, parseCall } from './parse.ts';
@@ -12,7 +13,15 @@ const handlers: Readonly<Record<string, (call: Call, out: Output) => Promise<num
   compare: compareCommand,
   order: orderCommand,
   factor: factorCommand,
+  convert: convertCommand,
+  combine: combineCommand,
+  difference: differenceCommand,
 };
+
+/** How a repair is said here: `--read WORD`, or an option of its own for files beside the matrix. */
+function optionOf(id: string): string {
+  return id.startsWith('permutation-') ? `--${id.replace('=', ' ')}` : `--read ${id}`;
+}
 
 /**
  * Runs one call of the command line.
@@ -33,7 +42,7 @@ export async function dispatch(words: readonly string[], out: Output): Promise<n
   } catch (error) {
     if (error instanceof Fault) {
       out.error(error.message);
-      for (const repair of error.repairs) out.error(`  --read ${repair.id}: ${repair.text}`);
+      for (const repair of error.repairs) out.error(`  ${optionOf(repair.id)}: ${repair.text}`);
       return error.kind === 'input' ? 2 : 3;
     }
     if (error instanceof RangeError && /allocation|array length|Array buffer/i.test(error.message)) {

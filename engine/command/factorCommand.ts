@@ -1,8 +1,6 @@
 import { plainSource } from '../../app/unpack/open.ts';
-import { readMatrix } from '../exchange/read.ts';
-import { defaultReadOptions } from '../exchange/readOptions.ts';
+import { readRightHandSides } from '../exchange/readRightHandSides.ts';
 import { Fault } from '../matrix/fault.ts';
-import type { SparseMatrix } from '../matrix/pattern.ts';
 import { type Proof, type ProofOptions, runProof } from '../trial/proof.ts';
 import type { TrialResult } from '../trial/result.ts';
 import { whyNoProof } from '../trial/rules.ts';
@@ -22,7 +20,15 @@ export async function factorCommand(call: Call, out: Output): Promise<number> {
   const refine = call.number('refine');
   const limit = call.number('memory-limit');
   const options: ProofOptions = {
-    ...(rhs === null ? {} : { rightHandSides: await loadRightHandSides(rhs, loaded.matrix.rows) }),
+    ...(rhs === null
+      ? {}
+      : {
+          rightHandSides: await readRightHandSides(
+            await plainSource(await pathFile(rhs)),
+            loaded.matrix.rows,
+            () => {},
+          ),
+        }),
     ...(refine === null ? {} : { refine }),
     ...(limit === null ? {} : { memoryLimit: limit }),
   };
@@ -35,32 +41,6 @@ export async function factorCommand(call: Call, out: Output): Promise<number> {
     out.line(proofText(trial, proof));
   }
   return proof.card.verdict === 'red' ? 4 : 0;
-}
-
-/** Dense right-hand sides from a Matrix Market file: one row for each row of the matrix. */
-async function loadRightHandSides(path: string, rows: number): Promise<NonNullable<ProofOptions['rightHandSides']>> {
-  const { matrix } = await readMatrix(await plainSource(await pathFile(path)), defaultReadOptions, () => {});
-  if (matrix.rows !== rows) {
-    throw new Fault(
-      'input',
-      'rhs-length',
-      `${path}: the right-hand side has ${matrix.rows} rows, the matrix ${rows}; expected as many.`,
-      { file: path },
-    );
-  }
-  return dense(matrix);
-}
-
-function dense(a: SparseMatrix): NonNullable<ProofOptions['rightHandSides']> {
-  const complex = a.field === 'complex';
-  const width = complex ? 2 : 1;
-  const values = new Float64Array(a.rows * a.columns * width);
-  for (let j = 0; j < a.columns; j++) {
-    for (let p = a.columnPointer[j]; p < a.columnPointer[j + 1]; p++) {
-      for (let w = 0; w < width; w++) values[(j * a.rows + a.rowIndex[p]) * width + w] = a.values?.[p * width + w] ?? 1;
-    }
-  }
-  return { columns: a.columns, values, complex };
 }
 
 /** The run as JSON. */

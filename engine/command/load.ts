@@ -1,50 +1,76 @@
 import { plainSource } from '../../app/unpack/open.ts';
 import type { Loaded } from '../exchange/loaded.ts';
 import { readMatrix } from '../exchange/read.ts';
+import { readNodes } from '../exchange/readNodes.ts';
 import { applyRepair, defaultReadOptions, type ReadOptions } from '../exchange/readOptions.ts';
 import { orderFrom, readPermutation } from '../exchange/readPermutation.ts';
 import type { Direction } from '../exchange/writePermutation.ts';
 import { Fault } from '../matrix/fault.ts';
+import type { SparseMatrix } from '../matrix/pattern.ts';
 import type { NewToOld } from '../matrix/permutation.ts';
+import type { NodeCoordinates } from '../problems/examples/example.ts';
 import type { Choice, FactorizationName, OrderingName } from '../trial/choice.ts';
 import { TrialContext } from '../trial/context.ts';
+import { bothDirections, leanerDirection } from '../trial/directions.ts';
 import { advisedFactorization, defaultChoice } from '../trial/rules.ts';
 import { pathFile } from './fileSource.ts';
 import type { Call } from './parse.ts';
 
-/** Reads the matrix a call names, with its `--read` words. */
-export async function loadMatrix(call: Call): Promise<Loaded> {
+/** Reads the matrix a call names (its file number `which`), with its `--read` words. */
+export async function loadMatrix(call: Call, which = 0): Promise<Loaded> {
   let options: ReadOptions = defaultReadOptions;
   for (const word of call.texts('read')) options = applyRepair(options, word);
-  return readMatrix(await plainSource(await pathFile(call.files[0]), options.member), options, () => {});
+  return readMatrix(await plainSource(await pathFile(call.files[which]), options.member), options, () => {});
 }
 
-/** The matrix with what the call gives beside it: a permutation, unknowns held last. */
+/** The matrix with what the call gives beside it: a permutation, coordinates of mesh nodes, unknowns held last. */
 export async function loadContext(call: Call): Promise<{ loaded: Loaded; context: TrialContext }> {
   const loaded = await loadMatrix(call);
-  const imported = await loadPermutation(call, loaded.matrix.columns);
+  const imported = await loadPermutation(call, loaded.matrix);
   const heldLast = await loadHeld(call, loaded.matrix.columns);
-  const context = new TrialContext({ matrix: loaded.matrix, coordinates: null, imported, heldLast });
+  const coordinates = await loadNodes(call, loaded.matrix.columns);
+  const context = new TrialContext({ matrix: loaded.matrix, coordinates, imported, heldLast });
   return { loaded, context };
 }
 
-async function loadPermutation(call: Call, n: number): Promise<NewToOld | null> {
+async function loadNodes(call: Call, unknowns: number): Promise<NodeCoordinates | null> {
+  const path = call.text('coordinates');
+  return path === null ? null : readNodes(await plainSource(await pathFile(path)), unknowns, () => {});
+}
+
+async function loadPermutation(call: Call, matrix: SparseMatrix): Promise<NewToOld | null> {
   const path = call.text('permutation');
   if (path === null) return null;
   const base = call.text('permutation-base');
-  const file = await readPermutation(await plainSource(await pathFile(path)), n, {
+  const vector = call.text('permutation-vector');
+  const file = await readPermutation(await plainSource(await pathFile(path)), matrix.columns, {
     base: base === null ? 'detect' : base === '0' ? 0 : 1,
+    vector: vector === null ? null : vector === '1' ? 1 : 2,
   });
   const direction = (call.text('permutation-direction') as Direction | null) ?? file.direction;
-  if (direction === null) {
-    throw new Fault(
-      'input',
-      'permutation-direction',
-      `${path} does not say its direction, and every permutation is valid both ways. Say --permutation-direction new-to-old (line k holds the unknown at position k) or old-to-new (line i holds the position of unknown i).`,
-      { file: path },
-    );
-  }
-  return orderFrom(file, direction);
+  if (direction !== null) return orderFrom(file, direction);
+  const forecast = bothDirections(matrix, file.values);
+  const leaner = leanerDirection(forecast);
+  const figure = (d: Direction) => {
+    const entries = forecast[d];
+    return entries === null ? '' : `; ${entries} factor entries${leaner === d ? ', the fewer' : ''}`;
+  };
+  throw new Fault(
+    'input',
+    'permutation-direction',
+    `${path}, line 1: the file does not say its direction, and every permutation is valid both ways. Say which one is meant.`,
+    { file: path, line: 1 },
+    [
+      {
+        id: 'permutation-direction=new-to-old',
+        text: `line k holds the unknown at position k${figure('new-to-old')}`,
+      },
+      {
+        id: 'permutation-direction=old-to-new',
+        text: `line i holds the position of unknown i${figure('old-to-new')}`,
+      },
+    ],
+  );
 }
 
 async function loadHeld(call: Call, n: number): Promise<Int32Array | null> {

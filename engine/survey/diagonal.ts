@@ -80,11 +80,15 @@ function sentenceOf(d: Diagonal): string {
     d.absent === 0 && d.zero === 0
       ? `All ${counted(d.length)} diagonal entries are present${d.positive === null ? '' : ' and nonzero'}`
       : `Of ${plural(d.length, 'diagonal entry', 'diagonal entries')}, ${counted(d.absent)} absent and ${counted(d.zero)} stored as zero`;
-  if (d.positive === null || d.nonzero === 0) return `${presence}.`;
+  const advice =
+    d.absent + d.zero === 0
+      ? ''
+      : ` Pivots cannot all be taken from it: use a matching of large entries to the diagonal, or LDLᵀ with 2×2 pivots.${d.absent > 0 ? ' Some solvers want every diagonal position stored, as a zero if need be.' : ''}`;
+  if (d.positive === null || d.nonzero === 0) return `${presence}.${advice}`;
   const signs = [
     d.positive > 0 && `${counted(d.positive)} positive`,
     (d.negative ?? 0) > 0 && `${counted(d.negative ?? 0)} negative`,
     (d.notReal ?? 0) > 0 && `${counted(d.notReal ?? 0)} not real`,
   ].filter((s) => s !== false);
-  return `${presence}: ${signs.join(', ')}.`;
+  return `${presence}: ${signs.join(', ')}.${advice}`;
 }

@@ -1,6 +1,9 @@
+import type { SparseMatrix, Symmetry } from '../matrix/pattern.ts';
+import { noProgress } from '../matrix/progress.ts';
 import { type Base, notSquare } from './base.ts';
 import { type Fact, fact, markEntry, undefinedFact } from './fact.ts';
-import type { Difference, MirrorScan } from './mirror.ts';
+import { type Difference, type MirrorScan, scanMirrors } from './mirror.ts';
+import { Ticker } from './ticker.ts';
 import { counted, figure, percent, plural } from './wording.ts';
 
 export interface Symmetries {
@@ -84,4 +87,14 @@ function nearness(word: string, mirror: string, d: Difference, relative: number 
     return `${word} up to ${figure(relative)} of the largest value (${pairs}, largest${where})`;
   }
   return `not ${word}: max |A − ${mirror}| = ${figure(d.largest)}${where}; ${pairs}`;
+}
+
+/** The symmetry a matrix has exactly, strongest use first; null for none or a rectangular one. */
+export function mirrorSymmetry(a: SparseMatrix): Symmetry | null {
+  if (a.rows !== a.columns) return null;
+  const scan = scanMirrors(a, null, new Ticker(noProgress, 1));
+  if (scan.mirrored < scan.offDiagonal) return null;
+  if (scan.symmetric.differing === 0) return 'symmetric';
+  if (scan.hermitian.differing === 0) return 'hermitian';
+  return scan.skew.differing === 0 ? 'skew-symmetric' : null;
 }
