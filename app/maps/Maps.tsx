@@ -12,7 +12,8 @@ const ask = () => void askWhy();
 
 /** The maps side by side, with their margin. Where the page is narrow, one at a time. */
 export function Maps({ name, panes, rows, columns, pointing }: MapsProps) {
-  const [frontId, setFront] = useState(panes[panes.length - 1].id);
+  // the newest map is in front until another is chosen
+  const [frontId, setFront] = useState<string | null>(null);
   const [drawn, setDrawn] = useState(0);
   const soon = useRef(0);
   // many images come while the hand moves: the words beside the maps hear of them together
@@ -23,7 +24,7 @@ export function Maps({ name, panes, rows, columns, pointing }: MapsProps) {
       setDrawn((k) => k + 1);
     }, 120);
   }, []);
-  const front = panes.some((p) => p.id === frontId) ? frontId : panes[panes.length - 1].id;
+  const front = panes.find((p) => p.id === frontId)?.id ?? panes[panes.length - 1].id;
   const { matrix } = panes[0];
 
   // biome-ignore lint/correctness/useExhaustiveDependencies: the look belongs to the matrix

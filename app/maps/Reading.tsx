@@ -14,7 +14,7 @@ export function ReadingOf({ drawn, onAsk }: { drawn: number; onAsk: () => void }
   if (reading === null) {
     return (
       <section className="reading" aria-label="Under the crosshair">
-        <h3>Under the crosshair</h3>
+        <h2>Under the crosshair</h2>
         <p className="small soft">
           Point into a map, or move there with Tab and the arrow keys. A click holds the place.
         </p>
@@ -25,9 +25,9 @@ export function ReadingOf({ drawn, onAsk }: { drawn: number; onAsk: () => void }
   const filled = spot?.kind === 'fill' && spot.row !== spot.column;
   return (
     <section className="reading" aria-label="Under the crosshair">
-      <h3>
+      <h2>
         Under the crosshair <span className="soft small">{pinned ? 'held' : ''}</span>
-      </h3>
+      </h2>
       <ReadingTable reading={reading} />
       {filled && path === null ? (
         <button type="button" onClick={onAsk}>

@@ -82,16 +82,37 @@ function cellSide({ counts }: MapImage): number {
   return (counts.window.columnEnd - counts.window.columnStart) / counts.columns;
 }
 
-/** Draws an image in the place of what lies there: its cells are translucent, so what is under it goes first. */
+/**
+ * Draws the part of an image that is in sight, in the place of what lies there: its cells are translucent, so what is under it goes
+ * first. Only that part is handed to the canvas: a close look stretches the whole image to a thousand times the screen.
+ */
 function drawImage(f: Frame, image: MapImage): void {
-  const { window } = image.counts;
+  const { context } = f;
+  const { window, rows, columns } = image.counts;
   const x = xOf(f, window.columnStart);
   const y = yOf(f, window.rowStart);
   const width = xOf(f, window.columnEnd) - x;
   const height = yOf(f, window.rowEnd) - y;
-  f.context.imageSmoothingEnabled = false;
-  f.context.clearRect(x, y, width, height);
-  f.context.drawImage(image.canvas, x, y, width, height);
+  const left = Math.max(0, x);
+  const top = Math.max(0, y);
+  const right = Math.min(f.width, x + width);
+  const bottom = Math.min(f.height, y + height);
+  if (right <= left || bottom <= top) return;
+  const across = columns / width;
+  const down = rows / height;
+  context.imageSmoothingEnabled = false;
+  context.clearRect(left, top, right - left, bottom - top);
+  context.drawImage(
+    image.canvas,
+    (left - x) * across,
+    (top - y) * down,
+    (right - left) * across,
+    (bottom - top) * down,
+    left,
+    top,
+    right - left,
+    bottom - top,
+  );
 }
 
 /** The image whose cells are single positions, large enough on the screen for shapes. */

@@ -84,8 +84,9 @@ function shapesAsSvg(control: PaneControl, canvas: HTMLCanvasElement): string | 
   return `<svg width="${canvas.width}" height="${canvas.height}">${out.join('')}</svg>`;
 }
 
-/** Saves the maps on the sheet as one picture. */
-export async function saveMaps(name: string, form: 'svg' | 'png'): Promise<void> {
+/** Saves the maps on the sheet as one picture, named after the sheet. */
+export async function saveMaps(sheet: string, form: 'svg' | 'png'): Promise<void> {
+  const name = sheet.replace(/\.[a-z]+$/i, '').replace(/[^\w.-]+/g, '-');
   const controls = [...paneControls.values()];
   if (controls.length === 0) return;
   const svg = mapsAsSvg(controls);

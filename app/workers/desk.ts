@@ -1,3 +1,4 @@
+import { transfer } from 'comlink';
 import { Cancelled } from '../../engine/matrix/progress.ts';
 import { failureOf } from './failure.ts';
 import { jobs } from './jobs.ts';
@@ -32,7 +33,10 @@ export class Desk implements WorkerDesk {
       };
       const early = (part: Early<K>, fraction: number, phase: string) => hear({ fraction, phase, early: part });
       const job = jobs[operation];
-      return { ok: true, value: await job(ask, { shelf: this.shelf, progress, early }) };
+      const given: ArrayBuffer[] = [];
+      const giveAway = (...buffers: ArrayBuffer[]) => void given.push(...buffers);
+      const value = await job(ask, { shelf: this.shelf, progress, early, giveAway });
+      return transfer({ ok: true as const, value }, given);
     } catch (thrown) {
       return { ok: false, failure: failureOf(thrown) };
     }

@@ -4,7 +4,6 @@ import { example, plates } from './exampleJobs.ts';
 import { forecast } from './forecastJobs.ts';
 import { convention, permutation } from './handoverJobs.ts';
 import { layMap, map, spot, whyFill } from './mapJobs.ts';
-import { density } from './pictureJobs.ts';
 import { prove } from './proofJobs.ts';
 import type { Answer, Ask, Early, Operation } from './protocol.ts';
 import { read } from './readJobs.ts';
@@ -18,6 +17,8 @@ export interface Means<E> {
   readonly progress: Progress;
   /** hands over a part of the answer ahead of it */
   readonly early: (part: E, fraction: number, phase: string) => void;
+  /** buffers of the answer that the worker has no more use for: they are moved to the page and not copied */
+  readonly giveAway: (...buffers: ArrayBuffer[]) => void;
 }
 
 export type Job<K extends Operation> = (ask: Ask<K>, means: Means<Early<K>>) => Answer<K> | Promise<Answer<K>>;
@@ -30,7 +31,6 @@ export const jobs: { readonly [K in Operation]: Job<K> } = {
   attach,
   example,
   survey,
-  density,
   layMap,
   map,
   spot,

@@ -20,7 +20,7 @@ export const layMap: Job<'layMap'> = ({ key, trial, result }, { shelf }) => {
   return outlinesOf(result);
 };
 
-export const map: Job<'map'> = ({ key, trial, window, cellRows, cellColumns, shade, inks }, { shelf }) => {
+export const map: Job<'map'> = ({ key, trial, window, cellRows, cellColumns, shade, inks }, { shelf, giveAway }) => {
   const plan = planFor(shelf, key, trial);
   if (plan === undefined) return { laid: false };
   const { matrix } = shelf.get(key).loaded;
@@ -28,6 +28,7 @@ export const map: Job<'map'> = ({ key, trial, window, cellRows, cellColumns, sha
   const cellArea =
     ((window.rowEnd - window.rowStart) / cellRows) * ((window.columnEnd - window.columnStart) / cellColumns);
   const pixels = rasterOf({ ...counts, cellArea, shade }, inks);
+  giveAway(counts.original.buffer as ArrayBuffer, counts.fill.buffer as ArrayBuffer, pixels.buffer);
   return { laid: true, counts, pixels } satisfies MapAnswer;
 };
 

@@ -3,7 +3,6 @@ import type { Direction, PermutationFormat } from '../../engine/exchange/writePe
 import type { TrialForecast } from '../../engine/forecast/forecast.ts';
 import type { Target } from '../../engine/forecast/target.ts';
 import type { NewToOld } from '../../engine/matrix/permutation.ts';
-import type { DensityMap } from '../../engine/picture/window.ts';
 import type { Survey } from '../../engine/survey/survey.ts';
 import type { Choice } from '../../engine/trial/choice.ts';
 import type { Proof } from '../../engine/trial/proof.ts';
@@ -76,8 +75,6 @@ export interface Operations extends MapOperations {
   example: { ask: { key: MatrixKey; id: string; size: number }; answer: Arrival; early: never };
   /** the facts of a matrix */
   survey: { ask: { key: MatrixKey }; answer: Survey; early: NamedFact };
-  /** how full the cells of a raster over the whole matrix are */
-  density: { ask: { key: MatrixKey; cells: number }; answer: DensityMap; early: never };
   /** one trial: ordering, analysis, forecast */
   trial: { ask: { key: MatrixKey; choice: Choice; heldLast: Int32Array }; answer: TrialAnswer; early: never };
   /** the numeric run of a finished trial; refused if its forecast passes the memory limit (bytes) */
