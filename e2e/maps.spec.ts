@@ -146,7 +146,7 @@ test('with a trial on the sheet the maps pass the accessibility scan, and on a n
   await page.setViewportSize({ width: 390, height: 844 });
   await expect(map(page, 'minimum degree')).toBeVisible();
   await expect(map(page, 'as read')).toBeHidden();
-  await page.getByLabel('map', { exact: true }).selectOption('as read');
+  await page.getByRole('combobox', { name: 'map', exact: true }).selectOption('as read');
   await expect(map(page, 'as read')).toBeVisible();
   await expect(map(page, 'minimum degree')).toBeHidden();
 });
