@@ -1,87 +1,7 @@
-import { repairIds } from '../exchange/readOptions.ts';
-import { factorizationNames, matchingNames, orderingNames, pivotingNames, scalingNames } from '../trial/choice.ts';
-import type { CommandRule, OptionRule } from './parse.ts';
-
-const json: OptionRule = { kind: 'flag', help: 'print one JSON object instead of text' };
-const read: OptionRule = {
-  kind: 'text',
-  many: true,
-  value: 'WORD',
-  help: `how to read a file that has two readings; a refusal names the word. Known: ${repairIds.join(', ')}`,
-};
-const factorization: OptionRule = {
-  kind: 'word',
-  words: factorizationNames,
-  help: 'factorization; default the one advised for the matrix',
-};
-const ordering: OptionRule = { kind: 'word', words: orderingNames, help: 'ordering method' };
-const permutation: OptionRule = {
-  kind: 'text',
-  value: 'FILE',
-  help: 'a permutation to use as the ordering "imported"; its direction comes from its header or --permutation-direction',
-};
-const permutationDirection: OptionRule = {
-  kind: 'word',
-  words: ['new-to-old', 'old-to-new'],
-  help: 'direction of the permutation file, where the file does not state it',
-};
-const permutationBase: OptionRule = {
-  kind: 'word',
-  words: ['0', '1'],
-  help: 'base of the permutation file; default detected',
-};
-const permutationVector: OptionRule = {
-  kind: 'word',
-  words: ['1', '2'],
-  help: 'which of two vectors in the permutation file: left or first, right or second',
-};
-const coordinates: OptionRule = {
-  kind: 'text',
-  value: 'FILE',
-  help: 'coordinates of the mesh nodes, one node a line, for geometric dissection',
-};
-const out: OptionRule = { kind: 'text', value: 'FILE', help: 'file to write' };
-const format: OptionRule = {
-  kind: 'word',
-  words: ['matrix-market', 'rutherford-boeing'],
-  help: 'format of the file; default matrix-market',
-};
-const storage: OptionRule = {
-  kind: 'word',
-  words: ['full', 'half'],
-  help: 'all entries, or one triangle of a matrix that is symmetric exactly; default full',
-};
-const held: OptionRule = {
-  kind: 'text',
-  value: 'FILE',
-  help: 'unknowns to keep at the end, 1-based integers, in that order',
-};
-const seed: OptionRule = { kind: 'integer', low: 1, high: 2 ** 31 - 2, help: 'seed of every random choice; default 1' };
-
-/** What shapes a trial; shared by the commands that make one. */
-const trialOptions: Readonly<Record<string, OptionRule>> = {
-  factorization,
-  permutation,
-  'permutation-direction': permutationDirection,
-  'permutation-base': permutationBase,
-  'permutation-vector': permutationVector,
-  coordinates,
-  pivoting: {
-    kind: 'word',
-    words: pivotingNames,
-    help: 'none, threshold, or static (small pivots replaced, then refined)',
-  },
-  threshold: { kind: 'number', low: 1e-12, high: 1, help: 'u of threshold pivoting: multipliers stay at most 1/u' },
-  scaling: { kind: 'word', words: scalingNames, help: 'scaling before ordering; default none' },
-  matching: { kind: 'word', words: matchingNames, help: 'matching of rows and columns before ordering; default none' },
-  blocks: {
-    kind: 'flag',
-    help: 'block triangular form first; off by default for symmetric factorizations, on for column-lu',
-  },
-  'held-last': held,
-  seed,
-  read,
-};
+import { orderingNames } from '../trial/choice.ts';
+import { targetOptions, workloadOptions } from './forecastOptions.ts';
+import { format, json, ordering, out, read, storage, trialOptions } from './options.ts';
+import type { CommandRule } from './parse.ts';
 
 /** The words of the command line. Checks of other programs are built on them: keep them stable. */
 export const commands: readonly CommandRule[] = [
@@ -90,10 +10,14 @@ export const commands: readonly CommandRule[] = [
     help: 'the facts of a matrix, in its own numbering',
     files: [1, 1],
     options: { json, read },
+    examples: [
+      ['survey bridge.mtx', 'symmetry, bandwidth, components, diagonal, magnitudes'],
+      ['survey bridge.mtx.gz --json', 'the same as one JSON object'],
+    ],
   },
   {
     name: 'compare',
-    help: 'what each ordering would cost: fill-in, memory, operations; no numeric work',
+    help: 'what each ordering would cost on a target and for a workload: fill-in, memory, operations, time; no numeric work',
     files: [1, 1],
     options: {
       orderings: {
@@ -103,8 +27,38 @@ export const commands: readonly CommandRule[] = [
         help: 'orderings to compare; default all that suit the matrix',
       },
       ...trialOptions,
+      spread: {
+        kind: 'integer',
+        low: 1,
+        high: 100,
+        help: 'runs each ordering on so many seeded relabellings; differences inside the spread are marked "no difference"',
+      },
+      ...targetOptions,
+      ...workloadOptions,
+      'page-memory': {
+        kind: 'bytes',
+        value: 'BYTES',
+        help: 'what a run in the page may use, for the line that says whether it can run it; default 6GiB',
+      },
       json,
     },
+    examples: [
+      ['compare bridge.mtx', 'every ordering that suits, the advised factorization'],
+      [
+        'compare bridge.mtx --orderings minimum-degree,nested-dissection --memory 64GiB --workers 16 --factorizations 200',
+        'two orderings, for 200 factorizations on a machine with 64 GiB and 16 cores',
+      ],
+      ['compare bridge.mtx --spread 5', 'five numberings of each: which differences are real'],
+      ['compare bridge.mtx --best-of operations --time-limit 10', 'one more line: the best that ten seconds can find'],
+      ['compare saddle.mtx --factorization ldlt --pairing structure', 'zero diagonals kept in 2×2 pivots'],
+      ['compare circuit.mtx --factorization column-lu --blocks', 'row interchanges, on block triangular form'],
+      ['compare bridge.mtx --held-last 1,40-52', 'and what the Schur complement of these unknowns costs'],
+      ['compare plate.mtx --coordinates nodes.txt --unknowns-per-node 2', 'geometric dissection too'],
+      [
+        'compare bridge.mtx --permutation order.txt',
+        'an order of your own as one more line, read both ways if it must be',
+      ],
+    ],
   },
   {
     name: 'order',
@@ -127,6 +81,14 @@ export const commands: readonly CommandRule[] = [
       },
       ...trialOptions,
     },
+    examples: [
+      ['order bridge.mtx --ordering nested-dissection --out order.txt', '1-based, new-to-old, postordered'],
+      [
+        'order bridge.mtx --ordering sloan --which requested --direction old-to-new --base 0 --out position.txt',
+        'as the method gave it, as positions, 0-based',
+      ],
+      ['order bridge.mtx --best-of entries --rounds 3 --out order.txt', 'the best of all orderings in three rounds'],
+    ],
   },
   {
     name: 'factor',
@@ -140,6 +102,53 @@ export const commands: readonly CommandRule[] = [
       'memory-limit': { kind: 'number', low: 0, value: 'BYTES', help: 'refuse a run that needs more by its forecast' },
       json,
     },
+  },
+  {
+    name: 'growth',
+    help: 'matrices of one family: how cost grows with n, and how large n can be in a given memory and time',
+    files: [2, 1000],
+    options: {
+      ordering,
+      ...trialOptions,
+      dimension: {
+        kind: 'word',
+        words: ['2', '3'],
+        help: 'dimension of the meshes, which chooses the law of the theory; default the law that predicts best',
+      },
+      seconds: { kind: 'number', low: 0, help: 'time that one factorization may take; default 3600' },
+      ...targetOptions,
+      json,
+    },
+    examples: [
+      [
+        'growth plate-10.mtx plate-20.mtx plate-40.mtx plate-80.mtx --memory 64GiB --seconds 3600',
+        'four refinements of one mesh: fits, local exponents, and the largest n',
+      ],
+    ],
+  },
+  {
+    name: 'reconcile',
+    help: 'what another solver reported, against every convention of counting: which one explains it, or that none does',
+    files: [1, 1],
+    options: {
+      orderings: {
+        kind: 'list',
+        words: orderingNames,
+        value: 'a,b,c',
+        help: 'orderings that may have been used; default all that suit the matrix',
+      },
+      ...trialOptions,
+      entries: { kind: 'number', low: 1, value: 'N', help: 'factor entries it reported' },
+      operations: { kind: 'number', low: 1, value: 'N', help: 'operations it reported' },
+      memory: { kind: 'bytes', value: 'BYTES', help: 'memory it reported' },
+      json,
+    },
+    examples: [
+      [
+        'reconcile bridge.mtx --entries 134208 --operations 8.1e6',
+        'which ordering and which way of counting give these',
+      ],
+    ],
   },
   {
     name: 'convert',

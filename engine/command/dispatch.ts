@@ -2,10 +2,12 @@ import { Fault } from '../matrix/fault.ts';
 import { commands } from './commands.ts';
 import { compareCommand } from './compareCommand.ts';
 import { factorCommand } from './factorCommand.ts';
+import { growthCommand } from './growthCommand.ts';
 import { combineCommand, convertCommand, differenceCommand } from './matrixCommands.ts';
 import { orderCommand } from './orderCommand.ts';
 import type { Output } from './output.ts';
 import { type Call, helpText, parseCall } from './parse.ts';
+import { reconcileCommand } from './reconcileCommand.ts';
 import { surveyCommand } from './surveyCommand.ts';
 
 const handlers: Readonly<Record<string, (call: Call, out: Output) => Promise<number>>> = {
@@ -13,6 +15,8 @@ const handlers: Readonly<Record<string, (call: Call, out: Output) => Promise<num
   compare: compareCommand,
   order: orderCommand,
   factor: factorCommand,
+  growth: growthCommand,
+  reconcile: reconcileCommand,
   convert: convertCommand,
   combine: combineCommand,
   difference: differenceCommand,

@@ -10,15 +10,18 @@ export async function orderCommand(call: Call, out: Output): Promise<number> {
   const path = call.text('out');
   if (path === null)
     throw new Fault('input', 'usage', '"order" needs --out FILE, the file to write the permutation to.');
-  if (call.text('ordering') === null && call.text('permutation') === null) {
-    throw new Fault('input', 'usage', '"order" needs --ordering NAME.');
+  if (orderingOf(call, 'natural') === 'natural' && call.text('ordering') === null) {
+    throw new Fault('input', 'usage', '"order" needs --ordering NAME, --best-of MEASURE or --permutation FILE.');
   }
   const { loaded, context } = await loadContext(call);
   const trial = runTrial(context, choiceOf(call, context, orderingOf(call, 'natural')));
   const which = call.text('which') ?? 'effective';
   const direction = (call.text('direction') ?? 'new-to-old') as Direction;
   const base = call.text('base') === '0' ? 0 : 1;
-  const title = `${loaded.name}, ${trial.choice.ordering} for ${trial.choice.factorization}, ${which} order`;
+  const { ordering } = trial.choice;
+  const name =
+    ordering === 'best-of' ? `best of several by ${trial.choice.portfolio.measure}: ${trial.ran.ordering}` : ordering;
+  const title = `${loaded.name}, ${name} for ${trial.choice.factorization}, ${which} order`;
   const format = (call.text('format') ?? 'plain') as 'plain' | 'matrix-market-array';
   await out.file(
     path,
@@ -26,5 +29,6 @@ export async function orderCommand(call: Call, out: Output): Promise<number> {
   );
   out.line(`${path}: ${title}`);
   out.line(permutationFormula(direction, base));
+  for (const note of trial.notes) out.line(note);
   return 0;
 }

@@ -51,3 +51,11 @@ export function shortBytes(value: number | null): string {
   }
   return `${unit === 0 ? size : size.toPrecision(3)} ${units[unit]}`;
 }
+
+/** Seconds with a unit that fits. */
+export function shortSeconds(value: number | null): string {
+  if (value === null || !Number.isFinite(value)) return '–';
+  if (value < 1e-3) return `${(value * 1e6).toPrecision(3)} µs`;
+  if (value < 1) return `${(value * 1e3).toPrecision(3)} ms`;
+  return value < 10_000 ? `${value.toPrecision(3)} s` : `${(value / 3600).toPrecision(3)} h`;
+}

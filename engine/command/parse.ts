@@ -3,8 +3,11 @@ import { Fault } from '../matrix/fault.ts';
 
 /** One option of a command. */
 export interface OptionRule {
-  /** `flag` takes no value; `text` any; `word` one of `words`; `integer`/`number` within [low, high]; `list` words of `words`, comma-separated */
-  readonly kind: 'flag' | 'text' | 'word' | 'integer' | 'number' | 'list';
+  /**
+   * `flag` takes no value; `text` any; `word` one of `words`; `integer`/`number` within [low, high]; `bytes` a number with an optional unit
+   * of 2¹⁰ (KiB, MiB, GiB, TiB) or 10³ (kB, MB, GB, TB); `list` words of `words`, comma-separated
+   */
+  readonly kind: 'flag' | 'text' | 'word' | 'integer' | 'number' | 'bytes' | 'list';
   readonly words?: readonly string[];
   readonly low?: number;
   readonly high?: number;
@@ -22,6 +25,8 @@ export interface CommandRule {
   /** how many files it takes, least and most */
   readonly files: readonly [number, number];
   readonly options: Readonly<Record<string, OptionRule>>;
+  /** calls as they are typed after the program's name, each with what it does */
+  readonly examples?: readonly (readonly [string, string])[];
 }
 
 /** A checked call. */
@@ -94,7 +99,7 @@ export function parseCall(words: readonly string[], commands: readonly CommandRu
     },
     number: (key) => {
       const given = text(key);
-      return given === null ? null : Number(given);
+      return given === null ? null : command.options[key]?.kind === 'bytes' ? bytesOf(given) : Number(given);
     },
     list: (key) => {
       const given = text(key);
@@ -117,6 +122,9 @@ function checkValue(key: string, rule: OptionRule, given: string): void {
       );
     }
   }
+  if (rule.kind === 'bytes' && !(bytesOf(given) > 0)) {
+    throw usage('bad-bytes', `--${key} ${given}: expected a number of bytes above 0, like 64GiB, 500MB or 1000000.`);
+  }
   if (rule.kind === 'integer' || rule.kind === 'number') {
     const value = given.trim() === '' ? Number.NaN : Number(given);
     const low = rule.low ?? Number.NEGATIVE_INFINITY;
@@ -128,6 +136,27 @@ function checkValue(key: string, rule: OptionRule, given: string): void {
   }
 }
 
+const byteUnits: Readonly<Record<string, number>> = {
+  '': 1,
+  b: 1,
+  kib: 2 ** 10,
+  mib: 2 ** 20,
+  gib: 2 ** 30,
+  tib: 2 ** 40,
+  kb: 1e3,
+  mb: 1e6,
+  gb: 1e9,
+  tb: 1e12,
+};
+
+/** "64GiB", "1.5 TB", "1000000"; NaN for anything else. */
+function bytesOf(given: string): number {
+  const found = /^\s*(\d+\.?\d*|\.\d+)(?:e(\d+))?\s*([a-z]*)\s*$/i.exec(given);
+  const unit = found === null ? undefined : byteUnits[found[3].toLowerCase()];
+  if (found === null || unit === undefined) return Number.NaN;
+  return Math.floor(Number(found[1]) * 10 ** Number(found[2] ?? 0) * unit);
+}
+
 function rangeWords(low: number, high: number): string {
   if (Number.isFinite(low) && Number.isFinite(high)) return ` from ${low} to ${high}`;
   if (Number.isFinite(low)) return ` of at least ${low}`;
@@ -135,9 +164,10 @@ function rangeWords(low: number, high: number): string {
   return '';
 }
 
-/** The help text of all commands, or of one. */
+/** The help text of all commands, one line each; or of one command, with its options and examples. */
 export function helpText(commands: readonly CommandRule[], name?: string): string {
   const lines: string[] = [];
+  if (name === undefined) return overview(commands);
   for (const command of commands) {
     if (name !== undefined && command.name !== name) continue;
     const files = command.files[1] === 0 ? '' : command.files[1] === 1 ? ' FILE' : ' FILE …';
@@ -149,7 +179,24 @@ export function helpText(commands: readonly CommandRule[], name?: string): strin
           : ` ${rule.value ?? (rule.kind === 'word' ? rule.words?.join('|') : rule.kind.toUpperCase())}`;
       lines.push(`    --${key}${value}`, `        ${rule.help}`);
     }
+    if (name !== undefined && command.examples !== undefined) {
+      lines.push('', '    Examples');
+      for (const [call, what] of command.examples) lines.push(`      ${call}`, `        ${what}`);
+    }
     lines.push('');
   }
   return lines.join('\n');
+}
+
+function overview(commands: readonly CommandRule[]): string {
+  const widest = Math.max(...commands.map((c) => c.name.length));
+  const lines = commands.map((c) => `  ${c.name.padEnd(widest)}  ${c.help}`);
+  return [
+    'Commands',
+    ...lines,
+    '',
+    '"help COMMAND" or "COMMAND --help" lists the options of a command, with examples.',
+    'Exit status: 0 done, 1 internal fault, 2 input or usage, 3 not completed, 4 completed but red, 5 a limit of a gate passed.',
+    '',
+  ].join('\n');
 }

@@ -1,4 +1,5 @@
 import type { PeakForecast } from './forecast.ts';
+import { inUnit } from './limits.ts';
 import type { Target, Workload } from './target.ts';
 import { compareWorkload, type TrialCost, workloadSeconds } from './workload.ts';
 
@@ -38,9 +39,6 @@ export interface Advice {
   readonly change: string | null;
 }
 
-const gib = (bytes: number): string =>
-  bytes >= 2 ** 30 / 100 ? `${(bytes / 2 ** 30).toPrecision(3)} GiB` : `${(bytes / 2 ** 20).toPrecision(3)} MiB`;
-
 /** Seconds as people say them. */
 function duration(seconds: number): string {
   if (seconds < 1e-3) return `${(seconds * 1e6).toPrecision(2)} µs`;
@@ -66,7 +64,7 @@ export function adviseOn(q: AdviceQuestion): Advice {
   if (fitting.length === 0) return nothingFits(q, why);
   const seconds = (t: AdviceTrial): number => workloadSeconds(t.cost, workload);
   const best = fitting.reduce((a, b) => (seconds(b) < seconds(a) ? b : a));
-  const sentence = `Use ${q.factorization} with ${best.name}: of ${counted(fitting.length, 'trial')} that fit${fitting.length === 1 ? 's' : ''} ${gib(target.memoryBytes)} it is the fastest for ${workloadWords(workload)}, ${duration(seconds(best))} on ${counted(target.cores, 'core')}, and needs ${gib(best.peak.bytes)}.`;
+  const sentence = `Use ${q.factorization} with ${best.name}: of ${counted(fitting.length, 'trial')} that fit${fitting.length === 1 ? 's' : ''} ${inUnit(target.memoryBytes)} it is the fastest for ${workloadWords(workload)}, ${duration(seconds(best))} on ${counted(target.cores, 'core')}, and needs ${inUnit(best.peak.bytes)}.`;
   return {
     sentence,
     best: best.name,
@@ -123,7 +121,7 @@ function cautionsOf(best: AdviceTrial, target: Target): string[] {
     out.push('Pivots are chosen by size: fill, memory and time can pass the forecast, and only a run shows it.');
     if (best.peak.delayed !== null && best.peak.delayed > target.memoryBytes) {
       out.push(
-        `With a fifth of the pivots delayed it would need ${gib(best.peak.delayed)} (modelled) and would not fit.`,
+        `With a fifth of the pivots delayed it would need ${inUnit(best.peak.delayed)} (modelled) and would not fit.`,
       );
     }
   }
@@ -151,15 +149,15 @@ function nothingFits(q: AdviceQuestion, why: string): Advice {
   const limit = target.memoryBytes;
   const changes = [
     single !== null && single.bytes <= limit
-      ? `in single precision, refined in double, ${single.trial.name} would fit with ${gib(single.bytes)}`
+      ? `in single precision, refined in double, ${single.trial.name} would fit with ${inUnit(single.bytes)}`
       : null,
     out !== null && out.bytes <= limit
-      ? `with its factors written out as they are made, ${out.trial.name} would need ${gib(out.bytes)}`
+      ? `with its factors written out as they are made, ${out.trial.name} would need ${inUnit(out.bytes)}`
       : null,
-    `${smallest.trial.name} would fit a machine with ${gib(smallest.bytes)}`,
+    `${smallest.trial.name} would fit a machine with ${inUnit(smallest.bytes)}`,
   ].filter((c) => c !== null);
   return {
-    sentence: `Nothing fits ${gib(limit)}: the smallest, ${smallest.trial.name}, needs ${gib(smallest.bytes)}; ${changes[0]}.`,
+    sentence: `Nothing fits ${inUnit(limit)}: the smallest, ${smallest.trial.name}, needs ${inUnit(smallest.bytes)}; ${changes[0]}.`,
     best: null,
     reasons: [why, ...changes.map((c) => `${c[0].toUpperCase()}${c.slice(1)}.`)],
     cautions: [...q.doubts, ...cautionsOf(smallest.trial, target)],

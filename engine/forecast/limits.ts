@@ -21,7 +21,11 @@ export interface LimitQuestion {
   readonly pageMemoryBytes: number;
 }
 
-const gib = (bytes: number): string => `${(bytes / 2 ** 30).toPrecision(3)} GiB`;
+/** Bytes in the unit that fits. */
+export function inUnit(bytes: number): string {
+  if (bytes >= 2 ** 30 / 10) return `${(bytes / 2 ** 30).toPrecision(3)} GiB`;
+  return bytes >= 2 ** 20 / 10 ? `${(bytes / 2 ** 20).toPrecision(3)} MiB` : `${(bytes / 2 ** 10).toPrecision(3)} KiB`;
+}
 
 /** Do counts exceed 2³¹ − 1? Does it fit the target? Can this page run it? `passed` is true when nothing is wrong. */
 export function limitLines(q: LimitQuestion): readonly LimitLine[] {
@@ -33,7 +37,7 @@ export function limitLines(q: LimitQuestion): readonly LimitLine[] {
       : '';
   const delayed =
     q.delayedBytes !== null && q.delayedBytes > q.memoryBytes
-      ? ` With a fifth of the pivots delayed it would need ${gib(q.delayedBytes)} (modelled) and would not.`
+      ? ` With a fifth of the pivots delayed it would need ${inUnit(q.delayedBytes)} (modelled) and would not.`
       : '';
   const page = q.pagePeakBytes <= q.pageMemoryBytes;
   return [
@@ -48,15 +52,15 @@ export function limitLines(q: LimitQuestion): readonly LimitLine[] {
       question: 'Does it fit the target’s memory?',
       passed: fits,
       sentence: fits
-        ? `Yes: it needs ${gib(q.peakBytes)} of ${gib(q.memoryBytes)}.${delayed}`
-        : `No: it needs ${gib(q.peakBytes)}, the target has ${gib(q.memoryBytes)}.`,
+        ? `Yes: it needs ${inUnit(q.peakBytes)} of ${inUnit(q.memoryBytes)}.${delayed}`
+        : `No: it needs ${inUnit(q.peakBytes)}, the target has ${inUnit(q.memoryBytes)}.`,
     },
     {
       question: 'Can this page run it?',
       passed: page,
       sentence: page
-        ? `Yes: a proof here takes ${gib(q.pagePeakBytes)}.`
-        : `No: a proof here would take ${gib(q.pagePeakBytes)}, more than the ${gib(q.pageMemoryBytes)} this page may use.`,
+        ? `Yes: a proof here takes ${inUnit(q.pagePeakBytes)}.`
+        : `No: a proof here would take ${inUnit(q.pagePeakBytes)}, more than the ${inUnit(q.pageMemoryBytes)} this page may use.`,
     },
   ];
 }

@@ -85,7 +85,27 @@ const grain = 1 / 20_000;
 function scheduleRows(tree: AssemblyTree, work: Float64Array, total: number, counts: readonly number[]): WorkersRow[] {
   const coarse = coarseTree(tree, work, grain * total);
   const path = waysToRoot(coarse.tree.parent, coarse.work).reduce((a, b) => Math.max(a, b), 0);
-  return counts.map((p) => rowFor(coarse.tree, coarse.work, total, path, p));
+  // p workers can always leave some of their number idle: a row is never slower than one with fewer
+  let best: WorkersRow | null = null;
+  return counts.map((p) => {
+    const row = rowFor(coarse.tree, coarse.work, total, path, p);
+    best = best === null ? row : notSlower(row, best);
+    return best;
+  });
+}
+
+function notSlower(row: WorkersRow, fewer: WorkersRow): WorkersRow {
+  const idle = (speedup: number): number => Math.max(0, 1 - speedup / row.workers);
+  const whole = row.speedup < fewer.speedup ? { speedup: fewer.speedup, idle: idle(fewer.speedup) } : {};
+  const split =
+    row.splitSpeedup < fewer.splitSpeedup
+      ? {
+          splitSpeedup: fewer.splitSpeedup,
+          splitIdle: idle(fewer.splitSpeedup),
+          splitBound: Math.max(row.splitBound, fewer.splitBound),
+        }
+      : {};
+  return { ...row, ...whole, ...split };
 }
 
 /** The part of a tree that is scheduled. */

@@ -4,7 +4,9 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { gzipSync } from 'node:zlib';
 import { describe, expect, it } from 'vitest';
+import { commands } from '../../engine/command/commands.ts';
 import { dispatch } from '../../engine/command/dispatch.ts';
+import { parseCall } from '../../engine/command/parse.ts';
 import { orderFrom, readPermutation } from '../../engine/exchange/readPermutation.ts';
 import { bytesSource } from '../../engine/exchange/source.ts';
 import { positionOf } from '../../engine/matrix/permutation.ts';
@@ -233,9 +235,24 @@ describe('usage', () => {
     });
   }
 
-  it('help explains every command', async () => {
+  it('help names every command, and explains each with its options and examples', async () => {
     const { status, out } = await run('help');
     expect(status).toBe(0);
-    for (const word of ['survey', 'compare', 'order', 'factor', '--orderings']) expect(out).toContain(word);
+    for (const { name, options, examples = [] } of commands) {
+      expect(out).toContain(`  ${name} `);
+      for (const words of [
+        ['help', name],
+        [name, '--help'],
+      ]) {
+        const help = await run(...words);
+        expect(help.status).toBe(0);
+        for (const option of Object.keys(options)) expect(help.out).toContain(`--${option}`);
+        for (const [call] of examples) {
+          expect(help.out).toContain(call);
+          // every example is a call that the parser takes
+          expect(parseCall(call.split(' '), commands).command.name).toBe(name);
+        }
+      }
+    }
   });
 });

@@ -79,7 +79,7 @@ describe('files beside a matrix', () => {
     const inverse = new Int32Array(n);
     for (let k = 0; k < n; k++) inverse[order[k]] = k;
     const path = file('p.txt', `${Array.from(order, (i) => i + 1).join('\n')}\n`);
-    const refused = await run('compare', referencePath('bcsstk01.mtx'), '--permutation', path);
+    const refused = await run('order', referencePath('bcsstk01.mtx'), '--permutation', path, '--out', '/dev/null');
     expect(refused.status).toBe(2);
     const there = naiveElimination(pattern, order).factorEntries;
     const back = naiveElimination(pattern, inverse).factorEntries;
@@ -89,6 +89,23 @@ describe('files beside a matrix', () => {
     expect(refused.error).toMatch(
       `--permutation-direction old-to-new: line i holds the position of unknown i; ${back}`,
     );
+    // a comparison shows both, and the lower fill as a hint
+    const both = await run(
+      'compare',
+      referencePath('bcsstk01.mtx'),
+      '--orderings',
+      'imported',
+      '--permutation',
+      path,
+      '--json',
+    );
+    const { trials, notes } = JSON.parse(both.out);
+    expect(trials.map((t: { factorEntries: number }) => t.factorEntries)).toEqual([there, back]);
+    expect(trials.map((t: { permutationDirection: string }) => t.permutationDirection)).toEqual([
+      'new-to-old',
+      'old-to-new',
+    ]);
+    expect(notes.join(' ')).toContain('only a hint');
   });
 
   it('two vectors: named with the option (needs 52); right-hand side of the wrong length (needs 54)', async () => {

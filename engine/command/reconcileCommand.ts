@@ -1,0 +1,103 @@
+import { workOfFronts } from '../forecast/frontWork.ts';
+import { type Explanation, explainedWithin, type OwnCounts, reconcile } from '../forecast/reconcile.ts';
+import { Fault } from '../matrix/fault.ts';
+import type { OrderingName } from '../trial/choice.ts';
+import type { TrialContext } from '../trial/context.ts';
+import { forecastTrial, treeOf } from '../trial/forecast.ts';
+import type { TrialResult } from '../trial/result.ts';
+import { suitableOrderings, whyNoForecast } from '../trial/rules.ts';
+import { arithmeticOf, runTrial } from '../trial/run.ts';
+import { targetOf } from './forecastOptions.ts';
+import { choiceOf, loadContext, matrixJson, matrixLine } from './load.ts';
+import { jsonText, type Output, tableText } from './output.ts';
+import type { Call } from './parse.ts';
+
+/** `reconcile FILE --entries N --operations N --memory N`: which ordering and convention explain what another solver reported. */
+export async function reconcileCommand(call: Call, out: Output): Promise<number> {
+  const reported = [
+    ['entries', call.number('entries')],
+    ['operations', call.number('operations')],
+    ['bytes', call.number('memory')],
+  ] as const;
+  if (reported.every(([, value]) => value === null)) {
+    throw new Fault(
+      'input',
+      'usage',
+      '"reconcile" needs a reported figure: --entries N, --operations N or --memory BYTES.',
+    );
+  }
+  const { loaded, context } = await loadContext(call);
+  const base = choiceOf(call, context, 'natural');
+  const wanted = call.list('orderings') as readonly OrderingName[] | null;
+  const names = wanted ?? suitableOrderings(context.facts, base.factorization);
+  const own: OwnCounts[] = [];
+  for (const ordering of names) {
+    const choice = { ...base, ordering };
+    const why = whyNoForecast(context.facts, choice);
+    if (why !== null) throw new Fault('input', 'trial-impossible', `${loaded.name}: ${why}`, { file: loaded.name });
+    own.push(ownCounts(call, context, runTrial(context, choice)));
+  }
+  const answers = reported.flatMap(([what, value]) =>
+    value === null ? [] : [{ what, reported: value, explanations: reconcile(what, value, own) }],
+  );
+  if (call.flag('json')) {
+    out.line(
+      jsonText({ matrix: matrixJson(loaded), factorization: base.factorization, within: explainedWithin, answers }),
+    );
+    return 0;
+  }
+  out.line(matrixLine(loaded));
+  for (const { what, reported: value, explanations } of answers) {
+    out.line('');
+    out.line(answerText(what, value, explanations));
+  }
+  return 0;
+}
+
+function ownCounts(call: Call, context: TrialContext, trial: TrialResult): OwnCounts {
+  const { counts, choice } = trial;
+  const target = targetOf(call);
+  const forecast = forecastTrial(context, trial, target, Number.POSITIVE_INFINITY);
+  if (forecast === null || counts.lowerEntries === null || counts.operations === null) {
+    throw new Fault('input', 'reconcile-undefined', 'Figures can be reconciled for square matrices only.');
+  }
+  const kind = choice.factorization === 'column-lu' ? 'lu' : choice.factorization;
+  const tree = treeOf(context, trial);
+  const padded =
+    tree === null ? null : workOfFronts(kind, tree, arithmeticOf(context, kind)).reduce((a, b) => a + b, 0);
+  const { storage } = forecast;
+  const layouts = [
+    ['supernodal panels', storage.panels.value],
+    ['fronts with their stack', storage.multifrontal.value],
+    ['stack of contribution blocks', storage.stack.value],
+    ['compressed columns with their pointers', storage.compressedColumns.value],
+    ['envelope (skyline)', storage.envelope.value],
+  ] as const;
+  return {
+    size: context.facts.columns,
+    name: choice.ordering,
+    kind,
+    lowerEntries: counts.lowerEntries,
+    upperEntries: counts.upperEntries,
+    storedFactorEntries: tree?.storedFactorEntries ?? null,
+    operations: counts.operations,
+    paddedOperations: padded,
+    complex: context.facts.complex,
+    layouts: layouts.flatMap(([word, value]) => (value === null ? [] : [[word, value] as const])),
+  };
+}
+
+function answerText(what: string, reported: number, explanations: readonly Explanation[]): string {
+  const said = `${what} reported: ${reported.toLocaleString('en-US')}`;
+  if (explanations.length === 0) {
+    return `${said}\nNo convention of counting and none of the orderings compared explains it within ${100 * explainedWithin} %: another ordering, another matrix, or pivoting that moved entries.`;
+  }
+  const rows = explanations
+    .slice(0, 12)
+    .map((e) => [e.convention, e.name, Math.round(e.value).toLocaleString('en-US'), distance(e.distance)]);
+  return `${said}\n${tableText([['convention', 'ordering', 'ours', 'distance'], ...rows])}`;
+}
+
+function distance(x: number): string {
+  return x === 0 ? 'exact' : `${(100 * x).toPrecision(2)} %`;
+}
