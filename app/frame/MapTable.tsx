@@ -3,6 +3,7 @@ import type { Pane } from '../maps/contract.ts';
 import { Maps } from '../maps/Maps.tsx';
 import type { Sheet } from '../state/sheets.ts';
 import { type SheetView, setSheetView, viewStore } from '../state/view.ts';
+import { TreeView } from '../tree/TreeView.tsx';
 import { Comparison } from '../trials/Comparison.tsx';
 import { sayChoice } from '../trials/explain.ts';
 import { Tabs } from './Tabs.tsx';
@@ -10,6 +11,7 @@ import { useStable } from './useStable.ts';
 
 const views: readonly { name: SheetView; label: string }[] = [
   { name: 'maps', label: 'Maps' },
+  { name: 'tree', label: 'Tree' },
   { name: 'comparison', label: 'Comparison' },
 ];
 
@@ -45,6 +47,8 @@ export function MapTable({ sheet }: { sheet: Sheet }) {
     >
       {view === 'comparison' ? (
         <Comparison sheet={sheet} />
+      ) : view === 'tree' ? (
+        <TreeView sheet={sheet} />
       ) : (
         <Maps
           name={sheet.name}

@@ -9,6 +9,7 @@ import type { Answer, Ask, Early, Operation } from './protocol.ts';
 import { read } from './readJobs.ts';
 import type { Shelf } from './shelf.ts';
 import { survey } from './surveyJobs.ts';
+import { front, tree } from './treeJobs.ts';
 import { trial } from './trialJobs.ts';
 
 /** What a job may use besides what it was asked. */
@@ -35,6 +36,8 @@ export const jobs: { readonly [K in Operation]: Job<K> } = {
   map,
   spot,
   whyFill,
+  tree,
+  front,
   trial,
   forecast,
   prove,

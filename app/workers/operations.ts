@@ -13,6 +13,7 @@ import type { MatrixKey } from './protocol.ts';
 import type { Stock } from './stock.ts';
 import type { ImportSummary } from './summary.ts';
 import type { NamedFact } from './surveyJobs.ts';
+import type { TreeOperations } from './treeOperations.ts';
 import type { TrialOutcome } from './trialFigures.ts';
 
 /** A worked example drawn small: how full each cell of a coarse raster is. */
@@ -54,7 +55,7 @@ export type Attached =
   | { readonly kind: 'which-direction'; readonly factorEntries: Readonly<Record<Direction, number | null>> };
 
 /** Every operation of a worker: what it asks, what it answers, what it can say early. */
-export interface Operations extends MapOperations {
+export interface Operations extends MapOperations, TreeOperations {
   /** the worked examples, drawn from their smallest size */
   plates: { ask: { cells: number }; answer: readonly Plate[]; early: Plate };
   /** a matrix from a file, with the repairs that were chosen */
