@@ -1,7 +1,9 @@
+import { Fault } from '../matrix/fault.ts';
 import type { Field, SparseMatrix, Symmetry } from '../matrix/pattern.ts';
 import type { ImportNote, Loaded } from './loaded.ts';
 import { placeTriplets } from './place.ts';
 import type { ReadOptions } from './readOptions.ts';
+import { absurdOrder } from './sizeLimits.ts';
 import { symmetrised } from './symmetrise.ts';
 import { syntheticMark, withSyntheticValues } from './syntheticValues.ts';
 import type { TripletStore } from './triplets.ts';
@@ -27,6 +29,8 @@ export const incompleteMark = ' (incomplete)';
 export function finishMatrix(store: TripletStore, r: FinishRequest): Loaded {
   const stored = store.count;
   const { file, rows, columns, field, symmetry, options } = r;
+  const absurd = absurdOrder(rows, columns, stored);
+  if (absurd !== null) throw new Fault('input', 'size-absurd', `${file}, byte 0: ${absurd}.`, { file, byteOffset: 0 });
   const placed = placeTriplets(store, { file, rows, columns, field, symmetry, duplicates: options.duplicates });
   return finishPlaced(placed.matrix, stored, placed.duplicates, { ...r, notes: [...r.notes, ...placed.notes] });
 }

@@ -86,7 +86,10 @@ export class MarketBody implements CoordinateTarget {
     this.refuseBySize(source, width);
     const known = source.size !== null && header.entries * leastBytes[header.layout] <= source.size;
     const room = known || header.entries <= trusted ? header.entries : 2 ** 20;
-    this.store = new TripletStore(width, direct !== null || options.incomplete === 'use' ? 2 ** 16 : room);
+    this.store = new TripletStore(
+      width,
+      direct !== null || options.incomplete === 'use' ? Math.min(room, 2 ** 16) : room,
+    );
   }
 
   /** Arithmetic from the size line, before anything is allocated. */

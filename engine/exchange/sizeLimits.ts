@@ -1,8 +1,8 @@
 /** Orders up to this are taken whatever the entries. */
-const ordinaryOrder = 2 ** 24;
+const ordinaryOrder = 2 ** 22;
 
 /**
- * Whether arrays by row or column would be absurd: beyond 16 million rows or columns a file must hold an entry for a thousand of them.
+ * Whether arrays by row or column would be absurd: beyond 4 million rows or columns a file must hold an entry for a thousand of them.
  * Says what would be needed, or null where all is well.
  */
 export function absurdOrder(rows: number, columns: number, entries: number): string | null {

@@ -1,6 +1,6 @@
 /**
  * Mutations of every kind of file the reader takes, seeded. Never a hang, a crash or a message without line, byte offset or member name;
- * what is accepted passes the invariant checker. FILLCAST_FUZZ sets the number of cases.
+ * what is accepted passes the invariant checker. 200,000 cases in all; FILLCAST_FUZZ sets another number.
  */
 import { readFileSync } from 'node:fs';
 import { gzipSync } from 'node:zlib';
@@ -9,18 +9,43 @@ import { packTar } from 'modern-tar';
 import { describe, expect, it } from 'vitest';
 import { blobFile, plainSource } from '../../app/unpack/open.ts';
 import { readMatrix } from '../../engine/exchange/read.ts';
+import { readLabels } from '../../engine/exchange/readLabels.ts';
+import { readNodes } from '../../engine/exchange/readNodes.ts';
 import { applyRepair, defaultReadOptions, type ReadOptions, repairIds } from '../../engine/exchange/readOptions.ts';
 import { readPermutation } from '../../engine/exchange/readPermutation.ts';
-import { bytesSource } from '../../engine/exchange/source.ts';
+import { readRightHandSides } from '../../engine/exchange/readRightHandSides.ts';
+import { type ByteSource, bytesSource } from '../../engine/exchange/source.ts';
 import { checkMatrix, checkPermutation } from '../../engine/matrix/check.ts';
 import { Fault } from '../../engine/matrix/fault.ts';
 import { Random } from '../../engine/matrix/random.ts';
 import { referencePath } from '../support/reference.ts';
 
-const cases = Number(process.env.FILLCAST_FUZZ ?? 4000);
+const all = Number(process.env.FILLCAST_FUZZ ?? 200_000);
+const archives = Math.ceil(all / 40);
+const beside = Math.ceil(all / 8);
+const cases = Math.max(1, all - archives - beside);
+/** A case that takes so long hangs, milliseconds. */
+const hanging = 20_000;
 const text = (t: string) => new TextEncoder().encode(t);
 const head = (field: string, symmetry: string) => `%%MatrixMarket matrix coordinate ${field} ${symmetry}\n`;
 const small = (name: string) => new Uint8Array(readFileSync(referencePath(name)));
+
+const title = (key: string) => `${'t'.padEnd(72)}${key}\n`;
+/** Harwell–Boeing and Rutherford–Boeing, all of the smallest kind: complex, pattern, skew, with a right-hand side, in other formats. */
+const cards: readonly Uint8Array[] = [
+  text(
+    `${title('k')}             3             1             1             1\nrua                        2             2             2             0\n(3I4)           (2I4)           (2F8.2)\n   1   2   3\n   1   2\n    1.50    2.50\n`,
+  ),
+  text(
+    `${title('c')}             3             1             1             1\ncsa                        2             2             2             0\n(3I3)           (4I3)           (1P,2E12.4)\n  1  2  3\n  1  2\n  1.5000E+00  2.5000E+00\n -1.0000D-01  0.0000E+00\n`,
+  ),
+  text(
+    `${title('p')}             2             1             1             0\npza                        3             3             2             0\n(4I4)           (2I4)\n   1   2   3   3\n   2   3\n`,
+  ),
+  text(
+    `${title('b')}             4             1             1             1             1\nRSA                        2             2             2             0\n(3I4)           (2I4)           (4F8.2)             (4F8.2)\nF                          1             0\n   1   2   3\n   1   2\n    1.50    2.50\n    7.00    8.00\n`,
+  ),
+];
 
 const fixtures: readonly Uint8Array[] = [
   text(
@@ -34,12 +59,16 @@ const fixtures: readonly Uint8Array[] = [
   text('%%MatrixMarket matrix array complex symmetric\n2 2\n1 0\n2 1\n3 -1\n'),
   text('0 0 1.5\n1 0 -2\n1 1 3\n2 2 9\n'),
   text('10,1,10,1,5.0\n10,1,3,2,-1.0\n3,2,3,2,4.0\n'),
-  small('bcsstk01.rsa').subarray(0, 6184),
-  text(
-    `${'t'.padEnd(72)}k\n             3             1             1             1\nrua                        2             2             2             0\n(3I4)           (2I4)           (2F8.2)\n   1   2   3\n   1   2\n    1.50    2.50\n`,
-  ),
-  small('LFAT5.mtx'),
+  ...cards,
 ];
+/** real files: larger, so taken less often */
+const large: readonly Uint8Array[] = [
+  small('bcsstk01.rsa').subarray(0, 6184),
+  small('LFAT5.mtx'),
+  small('bcsstk01.mtx').subarray(0, 4000),
+];
+const pick = (random: Random) =>
+  random.below(20) === 0 ? large[random.below(large.length)] : fixtures[random.below(fixtures.length)];
 
 const words = [
   '0',
@@ -103,16 +132,51 @@ function complaint(thrown: unknown, k: number, bytes: Uint8Array, options: unkno
   return `case ${k}: ${String(thrown)}\n${JSON.stringify(options)}\n${JSON.stringify(Buffer.from(bytes).toString('latin1')).slice(0, 1500)}`;
 }
 
+const nothing = (): void => {};
+/** Files beside a matrix of four unknowns, with what reads and checks them. */
+const companions: readonly (readonly [readonly Uint8Array[], (source: ByteSource) => Promise<unknown>])[] = [
+  [
+    [
+      text('3\n1\n2\n4\n'),
+      text('% new-to-old, 0-based: x\n2\n0 1\n3\n'),
+      text('%%MatrixMarket matrix array integer general\n4 1\n3\n1\n2\n4\n'),
+      text('1 3\n2 1\n3 2\n4 4\n'),
+    ],
+    async (source) => checkPermutation((await readPermutation(source, 4)).values, 4),
+  ],
+  [
+    [
+      text('1.5\n-2\n0\n4e-3\n'),
+      text('a;b\n1;2\n3;4\n5;6\n7;8\n'),
+      text('%%MatrixMarket matrix array complex general\n4 1\n1 0\n2 1\n3 0\n4 0\n'),
+    ],
+    async (source) => {
+      const b = await readRightHandSides(source, 4, nothing);
+      if (b.values.length !== 4 * b.columns * (b.complex ? 2 : 1)) throw new Error('wrong length');
+    },
+  ],
+  [
+    [text('x y\n0 0\n1 0.5\n'), text('1 0 0\n2 1 0\n4 1 1\n3 0 1\n'), text('0\n1\n2\n3\n')],
+    async (source) => {
+      const nodes = await readNodes(source, 4, nothing);
+      if (nodes.values.some((x) => x - x !== 0)) throw new Error('not finite');
+      if ((nodes.values.length / nodes.dimensions) * nodes.unknownsPerNode !== 4) throw new Error('wrong length');
+    },
+  ],
+  [[text('ux 1\nuy 1\nux 2\nuy 2\n')], (source) => readLabels(source, 4)],
+];
+
 describe('mutations', () => {
   it(`of matrix files: ${cases} cases (seed 41)`, async () => {
     const random = new Random(41);
     const bad: string[] = [];
     let accepted = 0;
     for (let k = 0; k < cases && bad.length < 3; k++) {
-      const bytes = mutate(fixtures[random.below(fixtures.length)], random);
+      const bytes = mutate(pick(random), random);
       const options = random.below(2) === 0 ? defaultReadOptions : optionsFor(random);
       const chunk = random.below(3) === 0 ? 1 + random.below(40) : 1 << 16;
       const source = bytesSource('f', bytes, chunk);
+      const start = performance.now();
       try {
         checkMatrix(
           (await readMatrix(random.below(5) === 0 ? { ...source, rewindable: false } : source, options, () => {}))
@@ -123,6 +187,7 @@ describe('mutations', () => {
         const text = complaint(thrown, k, bytes, options);
         if (text !== null) bad.push(text);
       }
+      if (performance.now() - start > hanging) bad.push(complaint('took too long', k, bytes, options) ?? '');
     }
     expect(bad).toEqual([]);
     // the mutations are mild enough that both outcomes are common
@@ -130,7 +195,7 @@ describe('mutations', () => {
     expect(accepted).toBeLessThan(cases * 0.9);
   }, 600_000);
 
-  it(`of archives: ${Math.ceil(cases / 40)} cases (seed 43)`, async () => {
+  it(`of archives: ${archives} cases (seed 43)`, async () => {
     const random = new Random(43);
     const body = fixtures[0];
     const packed = [
@@ -140,7 +205,7 @@ describe('mutations', () => {
       await packTar([{ header: { name: 'a.mtx', size: body.length, type: 'file' }, body }]),
     ];
     const bad: string[] = [];
-    for (let k = 0; k < cases / 40 && bad.length < 3; k++) {
+    for (let k = 0; k < archives && bad.length < 3; k++) {
       const bytes = mutate(packed[random.below(packed.length)], random);
       try {
         const source = await plainSource(blobFile('f', new Blob([bytes as Uint8Array<ArrayBuffer>])));
@@ -153,18 +218,14 @@ describe('mutations', () => {
     expect(bad).toEqual([]);
   }, 600_000);
 
-  it(`of permutation files: ${Math.ceil(cases / 10)} cases (seed 47)`, async () => {
+  it(`of files beside a matrix: ${beside} cases (seed 47)`, async () => {
     const random = new Random(47);
-    const files = [
-      text('3\n1\n2\n4\n'),
-      text('% new-to-old, 0-based: x\n2\n0 1\n3\n'),
-      text('%%MatrixMarket matrix array integer general\n4 1\n3\n1\n2\n4\n'),
-    ];
     const bad: string[] = [];
-    for (let k = 0; k < cases / 10 && bad.length < 3; k++) {
-      const bytes = mutate(files[random.below(files.length)], random);
+    for (let k = 0; k < beside && bad.length < 3; k++) {
+      const [kind, read] = companions[random.below(companions.length)];
+      const bytes = mutate(kind[random.below(kind.length)], random);
       try {
-        checkPermutation((await readPermutation(bytesSource('p', bytes, 1 + random.below(9)), 4)).values, 4);
+        await read(bytesSource('p', bytes, 1 + random.below(9)));
       } catch (thrown) {
         const text = complaint(thrown, k, bytes, null);
         if (text !== null) bad.push(text);

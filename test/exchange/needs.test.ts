@@ -107,6 +107,12 @@ describe('missing banner or size', () => {
       );
     }
   });
+  it('needs 14: absurd sizes are refused also where another reading was chosen', async () => {
+    const array = '%%MatrixMarket matrix array real general\n2 316777217\n1\n2\n';
+    expect((await faultOf(array, ['use-incomplete'])).message).toMatch(/byte 0: 2 × 316777217 with only 2 entries/);
+    const text = '316777217 3 3\n1 1 1\n3 1 2\n3 3 4\n';
+    expect((await faultOf(text, ['read-as-coordinate-text'])).code).toBe('size-absurd');
+  });
   it('needs 14: absurd sizes are refused before anything is allocated', async () => {
     for (const size of [
       '18446744073709551615 1 1',
