@@ -2,6 +2,7 @@ import { useStore } from 'zustand';
 import { asText, bytes, count, exactly, percent, times } from '../figures/format.ts';
 import { settingsStore } from '../state/settings.ts';
 import type { Sheet } from '../state/sheets.ts';
+import type { Trial } from '../state/trial.ts';
 import { chooseTrial } from '../state/trials.ts';
 import { sayChoice } from '../trials/explain.ts';
 import type { TreeAnswer } from '../workers/treeOperations.ts';
@@ -12,8 +13,7 @@ import { useTree } from './useTree.ts';
 /** How a trial would run over its fronts: the tree as areas, the fronts along the way, the memory of the stack. */
 export function TreeView({ sheet }: { sheet: Sheet }) {
   const done = sheet.trials.filter((t) => t.state === 'done');
-  const trial =
-    done.find((t) => t.id === sheet.chosen) ?? done.find((t) => sheet.shown.includes(t.id)) ?? done[0] ?? null;
+  const trial = done.find((t) => t.id === sheet.chosen) ?? (done.length === 0 ? null : done.reduce(lessWork));
   const state = useTree(sheet, trial);
   if (trial === null)
     return <p className="tree-word soft">The tree of a trial is drawn here as soon as one is ready.</p>;
@@ -41,6 +41,11 @@ export function TreeView({ sheet }: { sheet: Sheet }) {
   );
 }
 
+function lessWork(a: Trial, b: Trial): Trial {
+  const work = (t: Trial): number => t.outcome?.counts.operations ?? Number.POSITIVE_INFINITY;
+  return work(b) < work(a) ? b : a;
+}
+
 function Sentence({ answer: { tree } }: { answer: TreeAnswer }) {
   const gain = tree.criticalOperations > 0 ? tree.operations / tree.criticalOperations : 1;
   return (
@@ -64,7 +69,7 @@ function Pictures(props: { sheet: Sheet; trial: string; letter: string; answer: 
     <div className="tree-pictures">
       <TreeAreas sheet={sheet} trial={trial} letter={letter} answer={answer} />
       <Course
-        title="Front sizes along the elimination"
+        title="Front sizes on the way"
         file={`${letter}-fronts`}
         series={[{ name: 'order of the largest front', values: course.frontOrder, dashed: false }]}
         across={`unknowns eliminated, of ${asText(count(size))}`}
@@ -73,15 +78,16 @@ function Pictures(props: { sheet: Sheet; trial: string; letter: string; answer: 
         words={`The largest front has order ${exactly(largest)}.`}
       />
       <Course
-        title="Memory along the way"
+        title="Memory on the way"
         file={`${letter}-memory`}
         series={[
-          { name: 'stack of contribution blocks', values: course.stack.map((x) => x * width), dashed: false },
-          { name: 'factors made so far', values: course.factors.map((x) => x * width), dashed: true },
+          { name: 'stack', values: course.stack.map((x) => x * width), dashed: false },
+          { name: 'factors so far', values: course.factors.map((x) => x * width), dashed: true },
         ]}
         across="share of the operations done"
         write={(x) => asText(bytes(x))}
         limit={limit}
+        unit={1024 ** Math.floor(Math.log2(Math.max(1, course.factors[course.steps - 1] * width)) / 10)}
         words={`The stack is highest, ${asText(bytes(course.peak * width))}, when ${asText(percent(course.peakAt))} of the operations are done; values only, without indices.`}
       />
     </div>
