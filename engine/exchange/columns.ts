@@ -8,7 +8,7 @@ export interface Columns {
   readonly values: Float64Array;
   /** entries merged into another one */
   readonly duplicates: number;
-  /** first places (row, column; 0-based) where entries were merged, at most ten */
+  /** first places (row, column; 0-based) where entries were merged, at most twenty */
   readonly duplicatePlaces: readonly (readonly [number, number])[];
 }
 
@@ -64,7 +64,7 @@ export function sortAndMergeInPlace(
       const i = rowIndex[p];
       if (fill > from && rowIndex[fill - 1] === i) {
         duplicates++;
-        if (places.length < 10) places.push([i, j]);
+        if (places.length < 20) places.push([i, j]);
         for (let w = 0; w < width; w++) {
           const v = values[p * width + w];
           if (merge === 'sum') values[(fill - 1) * width + w] += v;

@@ -3,7 +3,7 @@ import { type Columns, sortAndMergeInPlace } from './columns.ts';
 import type { ColumnCount } from './coordinateCount.ts';
 import type { TripletStore } from './triplets.ts';
 
-/** Second pass: entries go straight to their column in the final arrays, mirrors with them. */
+/** Entries go straight to their column in the final arrays, mirrors with them. */
 export class DirectPlace {
   private readonly pointer: Int32Array;
   private readonly next: Int32Array;
@@ -14,7 +14,7 @@ export class DirectPlace {
   /** entries handed in so far, without mirrors */
   stored = 0;
 
-  constructor(count: ColumnCount, width: 0 | 1 | 2, symmetry: Symmetry) {
+  constructor(count: Pick<ColumnCount, 'columns' | 'counts'>, width: 0 | 1 | 2, symmetry: Symmetry) {
     const n = count.columns;
     this.pointer = new Int32Array(n + 1);
     for (let j = 0; j < n; j++) this.pointer[j + 1] = this.pointer[j] + count.counts[j];
@@ -67,6 +67,7 @@ export class DirectPlace {
     return {
       ...c,
       duplicates: this.stored - distinct,
+      // a place below the diagonal comes before its mirror, so half of the places listed suffice
       duplicatePlaces: c.duplicatePlaces.filter(([i, j]) => i >= j),
     };
   }

@@ -1,6 +1,7 @@
 import { Fault, type Repair } from '../matrix/fault.ts';
 import type { Field, SparseMatrix, Symmetry } from '../matrix/pattern.ts';
 import { type Columns, compressTriplets, expandLower, type MirrorRule } from './columns.ts';
+import { DirectPlace } from './directPlace.ts';
 import type { ImportNote } from './loaded.ts';
 import { TripletStore } from './triplets.ts';
 
@@ -27,12 +28,52 @@ export function placeTriplets(t: TripletStore, r: PlaceRequest): Placed {
     noteDuplicates(c, r.duplicates, notes);
     return { matrix: matrixOf(r, c), duplicates: c.duplicates, notes };
   }
-  const rule: MirrorRule =
-    r.symmetry === 'hermitian' ? 'conjugate' : r.symmetry === 'skew-symmetric' ? 'negate' : 'same';
-  const lower = lowerTriangle(t, r, rule, notes);
-  noteDuplicates(lower, r.duplicates, notes);
-  checkDiagonal(lower, r, t.width);
-  return { matrix: matrixOf(r, expandLower(lower, t.width, rule)), duplicates: lower.duplicates, notes };
+  const { above, below } = triangles(t);
+  if (above > 0 && below > 0) {
+    const lower = bothTriangles(t, r, notes);
+    noteDuplicates(lower, r.duplicates, notes);
+    checkDiagonal(lower, r, t.width);
+    return {
+      matrix: matrixOf(r, expandLower(lower, t.width, ruleOf(r.symmetry))),
+      duplicates: lower.duplicates,
+      notes,
+    };
+  }
+  if (above > 0) noteUpper(r.symmetry, notes);
+  const whole = expanded(t, r);
+  noteDuplicates(whole, r.duplicates, notes);
+  checkDiagonal(whole, r, t.width);
+  return { matrix: matrixOf(r, whole), duplicates: whole.duplicates, notes };
+}
+
+function ruleOf(symmetry: Symmetry): MirrorRule {
+  return symmetry === 'hermitian' ? 'conjugate' : symmetry === 'skew-symmetric' ? 'negate' : 'same';
+}
+
+function triangles(t: TripletStore): { above: number; below: number } {
+  const { row, column, count } = t;
+  let above = 0;
+  let below = 0;
+  for (let e = 0; e < count; e++) {
+    if (row[e] < column[e]) above++;
+    else if (row[e] > column[e]) below++;
+  }
+  return { above, below };
+}
+
+/** Both triangles from one, whichever it is, without an intermediate form. */
+function expanded(t: TripletStore, r: PlaceRequest): Columns {
+  const { row, column, count } = t;
+  const counts = new Int32Array(r.columns + 1);
+  for (let e = 0; e < count; e++) {
+    const i = row[e];
+    const j = column[e];
+    counts[j]++;
+    if (i !== j) counts[i]++;
+  }
+  const direct = new DirectPlace({ columns: r.columns, counts }, t.width, r.symmetry);
+  direct.take(t);
+  return direct.finish(r.duplicates);
 }
 
 function matrixOf(
@@ -52,7 +93,10 @@ function matrixOf(
 /** Notes how many entries were merged, and where first. */
 export function noteDuplicates(c: Columns, merge: 'sum' | 'last', notes: ImportNote[]): void {
   if (c.duplicates === 0) return;
-  const places = c.duplicatePlaces.map(([i, j]) => `(${i + 1}, ${j + 1})`).join(', ');
+  const places = c.duplicatePlaces
+    .slice(0, 10)
+    .map(([i, j]) => `(${i + 1}, ${j + 1})`)
+    .join(', ');
   const did = merge === 'sum' ? 'summed' : 'replaced by the last one';
   notes.push({
     code: merge === 'sum' ? 'duplicates-summed' : 'duplicates-last',
@@ -68,23 +112,11 @@ export function noteUpper(symmetry: Symmetry, notes: ImportNote[]): void {
   });
 }
 
-/** The lower triangle of symmetric storage, whichever triangle the file holds. */
-function lowerTriangle(t: TripletStore, r: PlaceRequest, rule: MirrorRule, notes: ImportNote[]): Columns {
-  let above = 0;
-  let below = 0;
-  for (let e = 0; e < t.count; e++) {
-    if (t.row[e] < t.column[e]) above++;
-    else if (t.row[e] > t.column[e]) below++;
-  }
-  if (above === 0) return compressTriplets(t, r.columns, r.duplicates);
-  if (below === 0) {
-    noteUpper(r.symmetry, notes);
-    mirrorInPlace(t, rule);
-    return compressTriplets(t, r.columns, r.duplicates);
-  }
+/** The lower triangle of symmetric storage that holds entries of both. */
+function bothTriangles(t: TripletStore, r: PlaceRequest, notes: ImportNote[]): Columns {
   const low = split(t, (i, j) => i >= j);
   const high = split(t, (i, j) => i < j);
-  mirrorInPlace(high, rule);
+  mirrorInPlace(high, ruleOf(r.symmetry));
   const a = compressTriplets(low, r.columns, r.duplicates);
   const b = compressTriplets(high, r.columns, r.duplicates);
   return mergeTriangles(a, b, t.width, r, notes);
