@@ -4,15 +4,39 @@ import { storageOf } from '../forecast/storage.ts';
 import type { Graph } from '../graph/graph.ts';
 import type { Pattern } from '../matrix/pattern.ts';
 import type { NewToOld } from '../matrix/permutation.ts';
-import { analyseGraph } from '../symbolic/analyse.ts';
+import { transposePattern } from '../matrix/transpose.ts';
+import { analyse, analyseGraph } from '../symbolic/analyse.ts';
 import { assemblyTree } from '../symbolic/assemblyTree.ts';
-import { luCounts } from '../symbolic/luCounts.ts';
+import { type LuCounts, luCounts } from '../symbolic/luCounts.ts';
 import { type Arithmetic, type FactorKind, factorOperations } from '../symbolic/operations.ts';
 import { rowMergeBound } from '../symbolic/rowMerge.ts';
+import type { SymbolicFactor } from '../symbolic/types.ts';
 import type { MeasureName } from './choice.ts';
 
-/** Steps of search and entries held beyond which the exact count without interchanges is given up. */
-export const countWorkLimit = 2e8;
+/** Steps of search and entries held beyond which the exact count without interchanges is given up: about two seconds. */
+const countWorkLimit = 1e8;
+
+/**
+ * Exact counts of an LU with pivots on the diagonal, or null beyond the work limit. Where the pattern is its own mirror they are those of the
+ * symmetric factor, without a limit.
+ */
+export function diagonalPivotCounts(
+  pattern: Pattern,
+  order: NewToOld,
+  symmetrised: Pick<SymbolicFactor, 'columnCount' | 'factorEntries'>,
+): LuCounts | null {
+  if (!isMirrored(pattern)) return luCounts(pattern, order, countWorkLimit);
+  const { columnCount, factorEntries } = symmetrised;
+  return { lower: columnCount, upper: columnCount, lowerEntries: factorEntries, upperEntries: factorEntries };
+}
+
+/** Whether the pattern equals its transpose; rows sorted. */
+function isMirrored(a: Pattern): boolean {
+  const t = transposePattern(a);
+  for (let j = 0; j <= a.columns; j++) if (a.columnPointer[j] !== t.columnPointer[j]) return false;
+  for (let p = 0; p < a.rowIndex.length; p++) if (a.rowIndex[p] !== t.rowIndex[p]) return false;
+  return true;
+}
 
 /**
  * Value of an order for fronts: factor entries, operations, bytes at the peak of a multifrontal run (8-byte scalars, 16 complex; 4-byte
@@ -57,7 +81,7 @@ export function columnMeasure(
   square: boolean,
   arithmetic: Arithmetic,
 ): number {
-  const counts = square ? luCounts(pattern, order, countWorkLimit) : null;
+  const counts = square ? diagonalPivotCounts(pattern, order, analyse(pattern, order, { postorder: false })) : null;
   const { lower, upper, lowerEntries, upperEntries } = counts ?? rowMergeBound(pattern, order);
   if (!square) return upperEntries;
   return measure === 'operations'

@@ -3,7 +3,7 @@ import { graphOf } from '../graph/graph.ts';
 import { asNewToOld, composeOrders, type NewToOld } from '../matrix/permutation.ts';
 import type { Progress } from '../matrix/progress.ts';
 import { analyseGraph, heightOf } from '../symbolic/analyse.ts';
-import { luCounts } from '../symbolic/luCounts.ts';
+import { columnTree } from '../symbolic/columnTree.ts';
 import { factorOperations } from '../symbolic/operations.ts';
 import { postorder } from '../symbolic/postorder.ts';
 import { profileOf } from '../symbolic/profile.ts';
@@ -14,7 +14,7 @@ import type { Choice } from './choice.ts';
 import type { TrialContext } from './context.ts';
 import { type DiagonalBlocks, diagonalBlocks } from './diagonalBlocks.ts';
 import { heldBlockOf } from './heldBlock.ts';
-import { columnMeasure, countWorkLimit } from './measure.ts';
+import { columnMeasure, diagonalPivotCounts } from './measure.ts';
 import { takesPostorder } from './order.ts';
 import { arrangeBest, membersOf } from './portfolio.ts';
 import { emptyPlan, plannedRowOf, planOf, type TrialPlan } from './prepared.ts';
@@ -54,11 +54,11 @@ export function runColumnTrial(context: TrialContext, choice: Choice, progress: 
   const requested = best.result.order;
   const t1 = now();
   progress(0.6, 'row-merge bound');
-  const first = rowMergeBound(pattern, requested);
   const held = heldLast?.length ?? 0;
-  const post = takesPostorder(best.ran.ordering) ? asNewToOld(postorder(first.parent, held)) : null;
+  // on the tree of AᵀA, where a postorder changes nothing whatever rows are interchanged
+  const post = takesPostorder(best.ran.ordering) ? asNewToOld(postorder(columnTree(pattern, requested), held)) : null;
   const effective = post === null ? requested : composeOrders(requested, post);
-  const bound = post === null ? first : rowMergeBound(pattern, effective);
+  const bound = rowMergeBound(pattern, effective);
   progress(0.8, 'count without interchanges');
   const counted =
     blocks === null || form === null
@@ -142,8 +142,8 @@ function squareCounts(
   const arithmetic = context.facts.complex ? 'complex' : 'real';
   const widths = usualWidths(context.facts.complex);
   const graph = graphOf(blocks.pattern);
-  const exact = luCounts(blocks.pattern, order, countWorkLimit);
   const symmetrised = analyseGraph(graph, order, { postorder: false });
+  const exact = diagonalPivotCounts(blocks.pattern, order, symmetrised);
   const lower = exact?.lower ?? symmetrised.columnCount;
   const upper = exact?.upper ?? symmetrised.columnCount;
   const lowerEntries = exact?.lowerEntries ?? symmetrised.factorEntries;
