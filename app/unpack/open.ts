@@ -1,6 +1,6 @@
 import type { ByteSource } from '../../engine/exchange/source.ts';
 import { Fault } from '../../engine/matrix/fault.ts';
-import { chunksOf, headOf, type Member, type RawFile, streamOf } from './raw.ts';
+import { chunksOf, headOf, type Member, type RawFile, streamOf, watched } from './raw.ts';
 import { tarMember, tarMembers } from './tar.ts';
 import { zipMember, zipMembers } from './zip.ts';
 
@@ -27,7 +27,9 @@ export function packingOf(head: Uint8Array): Packing {
 async function* gunzipped(packed: RawFile): AsyncGenerator<Uint8Array<ArrayBuffer>> {
   let out = 0;
   try {
-    for await (const chunk of chunksOf(packed.stream().pipeThrough(new DecompressionStream('gzip')))) {
+    const chunks =
+      packed.gunzipped?.(() => {}) ?? chunksOf(packed.stream().pipeThrough(new DecompressionStream('gzip')));
+    for await (const chunk of chunks) {
       out += chunk.length;
       yield chunk as Uint8Array<ArrayBuffer>;
     }
@@ -64,13 +66,14 @@ async function* guarded(
   }
 }
 
-function unpackedFile(
-  name: string,
-  size: number | null,
-  chunks: () => AsyncGenerator<Uint8Array<ArrayBuffer>>,
-): RawFile {
+/** A file that comes out of another one. */
+interface Unpacked extends RawFile {
+  chunks(): AsyncGenerator<Uint8Array<ArrayBuffer>>;
+}
+
+function unpackedFile(name: string, chunks: () => AsyncGenerator<Uint8Array<ArrayBuffer>>): Unpacked {
   const stream = () => streamOf(chunks());
-  return { name, size, stream, head: (count) => headOf(stream(), count) };
+  return { name, size: null, stream, chunks, head: (count) => headOf(stream(), count) };
 }
 
 /** The members of an archive (folders left out), or null for a file that is none. gzip around a tar is looked through. */
@@ -79,9 +82,7 @@ export async function membersOf(file: RawFile): Promise<readonly Member[] | null
   if (packing === 'zip') return zipMembers(file);
   if (packing === 'tar') return tarMembers(file);
   if (packing === 'none') return null;
-  const inner = unpackedFile(file.name, null, () =>
-    guarded(file.name, file.size ?? harmless, harmless, gunzipped(file)),
-  );
+  const inner = unpackedFile(file.name, () => guarded(file.name, file.size ?? harmless, harmless, gunzipped(file)));
   return packingOf(await inner.head(512)) === 'tar' ? tarMembers(inner) : null;
 }
 
@@ -96,7 +97,14 @@ export async function plainSource(
   member: string | null = null,
   free: number = harmless,
 ): Promise<ByteSource> {
-  return unpacked(file, member, { packedSize: file.size ?? harmless, free }, 0);
+  let pulled = 0;
+  const whole = watched(file, (bytes) => {
+    pulled = bytes;
+  });
+  const source = await unpacked(whole, member, { packedSize: file.size ?? harmless, free }, 0);
+  // what is not packed is read without the detour
+  if (source.size !== null) return { ...source, open: () => chunksOf(file.stream()) };
+  return { ...source, packedSize: file.size, pulled: () => pulled };
 }
 
 interface Limits {
@@ -113,7 +121,7 @@ async function unpacked(file: RawFile, member: string | null, limits: Limits, de
       size: depth === 0 ? file.size : null,
       packedSize: depth === 0 ? file.size : null,
       rewindable: true,
-      open: () => chunksOf(file.stream()),
+      open: () => ('chunks' in file ? (file as Unpacked).chunks() : chunksOf(file.stream())),
     };
   }
   if (depth === deepest) {
@@ -126,13 +134,13 @@ async function unpacked(file: RawFile, member: string | null, limits: Limits, de
   }
   const name = file.name.replace(/\.gz$/i, '').replace(/\.tgz$/i, '.tar');
   if (packing === 'gzip') {
-    const inner = unpackedFile(name, null, () => guarded(file.name, limits.packedSize, limits.free, gunzipped(file)));
+    const inner = unpackedFile(name, () => guarded(file.name, limits.packedSize, limits.free, gunzipped(file)));
     return unpacked(inner, member, limits, depth + 1);
   }
   const members = packing === 'zip' ? await zipMembers(file) : await tarMembers(file);
   const chosen = choose(file.name, members, member);
   const bytes = packing === 'zip' ? zipMember : tarMember;
-  const inner = unpackedFile(chosen.split('/').at(-1) ?? chosen, null, () =>
+  const inner = unpackedFile(chosen.split('/').at(-1) ?? chosen, () =>
     guarded(file.name, limits.packedSize, limits.free, bytes(file, chosen)),
   );
   return unpacked(inner, null, limits, depth + 1);

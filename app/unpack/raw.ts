@@ -7,6 +7,8 @@ export interface RawFile {
   stream(): ReadableStream<Uint8Array<ArrayBuffer>>;
   /** the first bytes, at most `count` */
   head(count: number): Promise<Uint8Array>;
+  /** its bytes unpacked as gzip by a quicker way than the standard one of the web; `seen` is told how many packed bytes were pulled so far */
+  gunzipped?(seen: (packed: number) => void): AsyncIterable<Uint8Array<ArrayBuffer>>;
 }
 
 /** A file in an archive. */
@@ -45,6 +47,24 @@ export async function* chunksOf(
   } finally {
     await reader.cancel().catch(() => {});
   }
+}
+
+/** The same file; `seen` is told the bytes pulled since the stream was opened. */
+export function watched(file: RawFile, seen: (bytes: number) => void): RawFile {
+  async function* chunks(): AsyncGenerator<Uint8Array<ArrayBuffer>> {
+    let pulled = 0;
+    for await (const chunk of chunksOf(file.stream())) {
+      pulled += chunk.length;
+      seen(pulled);
+      yield chunk;
+    }
+  }
+  const quick = file.gunzipped?.bind(file);
+  return {
+    ...file,
+    stream: () => streamOf(chunks()),
+    ...(quick === undefined ? {} : { gunzipped: () => quick(seen) }),
+  };
 }
 
 /** The other way round. */

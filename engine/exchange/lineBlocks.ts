@@ -19,7 +19,7 @@ const longestLine = 1 << 24;
 /**
  * Cuts a stream into blocks of whole lines, whatever the seams of its chunks. LF, CR LF and lone CR end a line.
  * A byte-order mark at the start is skipped.
- * @param onBytes told the bytes pulled so far, before each block; may throw to stop
+ * @param onBytes told the bytes pulled so far (packed ones of a packed file), before each block; may throw to stop
  */
 export async function* lineBlocks(source: ByteSource, onBytes: (bytes: number) => void): AsyncGenerator<LineBlock> {
   let carry = new Uint8Array(0);
@@ -28,7 +28,7 @@ export async function* lineBlocks(source: ByteSource, onBytes: (bytes: number) =
   let offset = 0;
   for await (const chunk of source.open()) {
     pulled += chunk.length;
-    onBytes(pulled);
+    onBytes(source.pulled?.() ?? pulled);
     let start = 0;
     const cut = lastLineEnd(chunk, start);
     if (cut <= start) {

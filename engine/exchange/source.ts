@@ -10,6 +10,8 @@ export interface ByteSource {
   readonly packedSize: number | null;
   /** whether `open` may be called again and yields the same bytes (two passes: count, then place) */
   readonly rewindable: boolean;
+  /** bytes out of `packedSize` pulled since `open`, where these are not the bytes handed over */
+  pulled?(): number;
   /** a fresh stream of chunks; each chunk is only valid until the next is asked for */
   open(): AsyncIterable<Uint8Array>;
 }

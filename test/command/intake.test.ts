@@ -2,6 +2,7 @@
 import { existsSync, mkdtempSync, readFileSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { gzipSync } from 'node:zlib';
 import { describe, expect, it } from 'vitest';
 import { dispatch } from '../../engine/command/dispatch.ts';
 import { naiveElimination } from '../support/elimination.ts';
@@ -67,6 +68,31 @@ describe('the import summary', () => {
     expect((await run('factor', pattern, '--factorization', 'cholesky')).status).toBe(2);
     const made = await run('factor', pattern, '--factorization', 'cholesky', '--read', 'synthetic-values');
     expect([made.status, made.out]).toEqual([0, expect.stringContaining('p.mtx (synthetic values)')]);
+  });
+});
+
+describe('packed files', () => {
+  it('gzip of one and of several members; damaged and cut ones are refused with a byte (needs 41)', async () => {
+    const plain = readFileSync(referencePath('bcsstk01.mtx'));
+    const packed = gzipSync(plain);
+    const write = (name: string, bytes: Uint8Array) => {
+      const path = join(folder, name);
+      writeFileSync(path, bytes);
+      return path;
+    };
+    const two = Buffer.concat([gzipSync(plain.subarray(0, 5000)), gzipSync(plain.subarray(5000))]);
+    for (const bytes of [packed, two]) {
+      const { difference } = JSON.parse(
+        (await run('difference', referencePath('bcsstk01.mtx'), write('k.mtx.gz', bytes), '--json')).out,
+      );
+      expect(difference).toMatchObject({ samePattern: true, values: { changed: 0 } });
+    }
+    const wrong = Buffer.from(packed);
+    for (let k = 300; k < 320; k++) wrong[k] ^= 255;
+    for (const bytes of [packed.subarray(0, 900), wrong]) {
+      const { status, error } = await run('survey', write('bad.gz', bytes));
+      expect([status, error]).toEqual([2, expect.stringMatching(/byte \d+|line \d+/)]);
+    }
   });
 });
 

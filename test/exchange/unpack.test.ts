@@ -71,6 +71,18 @@ describe('needs 41: packed files', () => {
     expect(await membersOf(raw('a', plain))).toBe(null);
   });
 
+  it('progress of packed files is told in packed bytes, so that a share is known', async () => {
+    for (const bytes of [gzipSync(plain), zipSync({ 'k.mtx': plain })]) {
+      const told: [number, number | null][] = [];
+      await readMatrix(await plainSource(raw('a', bytes)), defaultReadOptions, (done, total) =>
+        told.push([done, total]),
+      );
+      expect(told.length).toBeGreaterThan(0);
+      for (const [done, total] of told) expect([total, done <= bytes.length]).toEqual([bytes.length, true]);
+      expect(told.at(-1)?.[0]).toBe(bytes.length);
+    }
+  });
+
   it('damaged and cut archives are refused with a byte or a member', async () => {
     const zip = zipSync({ 'k.mtx': plain });
     const tarred = await tar({ 'k.mtx': plain });

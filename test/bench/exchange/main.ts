@@ -110,7 +110,7 @@ for (const file of files) {
   console.log(
     `${basename(file)}, ${(bytes.length / 1e6).toFixed(1)} MB: compiled parse ${rate(best.theirs)}, total ${rate(best.theirTotal)}; ` +
       `parse ${rate(best.parse)} (${(best.theirs / best.parse).toFixed(2)} ×), total ${rate(best.total)} (${(best.theirTotal / best.total).toFixed(2)} × total, ` +
-      `${(best.theirs / best.total).toFixed(2)} × parse), two passes ${rate(best.passes)}; gzip ${(best.gzip / best.unpack).toFixed(2)} × unpacking alone; ` +
+      `${(best.theirs / best.total).toFixed(2)} × parse), two passes ${rate(best.passes)}; unpacking alone ${rate(best.unpack)}, gzip ${(best.gzip / best.unpack).toFixed(2)} × that; ` +
       `Number() asked ${doubtful - before} times`,
   );
 }
