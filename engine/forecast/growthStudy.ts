@@ -1,5 +1,8 @@
 import { fitGrowth, type GrowthFit, type GrowthLaw, growthAt, largestSize } from './growth.ts';
 
+/** Relative distance up to which a law of the theory is taken to fit. */
+const fitsWithin = 0.1;
+
 /** One matrix of a family, with what one ordering of it costs. */
 export interface FamilyMember {
   readonly name: string;
@@ -18,7 +21,10 @@ export type GrownFigure = (typeof grownFigures)[number];
 /** How one figure grows. */
 export interface FigureGrowth {
   readonly figure: GrownFigure;
-  /** the law that predicts the largest size best from the others; with fewer than three sizes the one that fits best */
+  /**
+   * the law of the theory that predicts the largest size best from the others, a free exponent where none comes within 10 %; with fewer than
+   * three sizes the law that fits best
+   */
   readonly fit: GrowthFit;
   /** every law tried */
   readonly fits: readonly GrowthFit[];
@@ -97,7 +103,10 @@ function growthOf(members: readonly FamilyMember[], figure: GrownFigure, laws: r
     return Math.abs(growthAt(without, last.n) / last.value - 1);
   };
   const score = (fit: GrowthFit): number => leftOut(fit.law) ?? fit.worst;
-  const fit = fits.reduce((a, b) => (score(b) < score(a) ? b : a));
+  const best = (some: readonly GrowthFit[]): GrowthFit => some.reduce((a, b) => (score(b) < score(a) ? b : a));
+  // far away the theory is the better guide: a free exponent stands in only where the theory's laws do not fit
+  const theory = fits.filter((f) => f.law !== 'free exponent' && score(f) <= fitsWithin);
+  const fit = best(theory.length > 0 ? theory : fits);
   const { exponents } = fit;
   return {
     figure,
@@ -113,6 +122,6 @@ function reachSentence(what: 'memory' | 'time', limit: number, n: number, distan
   const far =
     distance <= 1
       ? 'within the sizes counted'
-      : `${distance.toPrecision(2)} times the largest size counted${distance > 10 ? ': a long way to extrapolate' : ''}`;
+      : `${Number(distance.toPrecision(2)).toLocaleString('en-US')} times the largest size counted${distance > 10 ? ': a long way to extrapolate' : ''}`;
   return `In ${room}, n can be up to about ${Number(n.toPrecision(3)).toLocaleString('en-US')}, ${far}.`;
 }
