@@ -69,7 +69,9 @@ async function countFirst(
   let count: ColumnCount | null = null;
   let declared = 0;
   let line = 0;
-  for await (const block of lineBlocks(source, (bytes) => progress(bytes, total, 'counting'))) {
+  const pass = (bytes: number) =>
+    count === null ? progress(0, source.packedSize, 'reading') : progress(bytes, total, 'counting');
+  for await (const block of lineBlocks(source, pass)) {
     let at = block.start;
     while (count === null && at < block.end) {
       const end = lineEnd(block, at);
