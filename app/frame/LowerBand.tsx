@@ -8,6 +8,7 @@ import { currentSheet, type Sheet, sheetsStore } from '../state/sheets.ts';
 import { openPanel, type PanelName, viewStore } from '../state/view.ts';
 import { SurveyPanel } from '../survey/SurveyPanel.tsx';
 import { Ledger } from '../trials/Ledger.tsx';
+import { Boundary } from './Boundary.tsx';
 import { Splitter } from './Splitter.tsx';
 import { Tabs } from './Tabs.tsx';
 import { useWide } from './useWide.ts';
@@ -45,7 +46,11 @@ function Work({ sheet }: { sheet: Sheet }) {
   const name = wide && asked === 'trials' ? 'survey' : asked;
   return (
     <div className="work">
-      {wide ? <Ledger sheet={sheet} /> : null}
+      {wide ? (
+        <Boundary part="The ledger">
+          <Ledger sheet={sheet} />
+        </Boundary>
+      ) : null}
       <Tabs
         id="panels"
         label="Panels"
@@ -54,7 +59,9 @@ function Work({ sheet }: { sheet: Sheet }) {
         onChoose={openPanel}
         className={name === 'trials' ? 'tabs-bare' : ''}
       >
-        <Panel key={sheet.id} name={name} sheet={sheet} />
+        <Boundary key={`${sheet.id} ${name}`} part="This panel">
+          <Panel name={name} sheet={sheet} />
+        </Boundary>
       </Tabs>
     </div>
   );

@@ -3,6 +3,7 @@ import { DropArea } from '../intake/DropArea.tsx';
 import { FaultView } from '../intake/FaultView.tsx';
 import { ReadingView } from '../intake/ReadingView.tsx';
 import { currentSheet, sheetsStore } from '../state/sheets.ts';
+import { Boundary } from './Boundary.tsx';
 import { MapTable } from './MapTable.tsx';
 
 /** The middle band: the drop area, what is coming in, what went wrong, or the maps. */
@@ -17,7 +18,9 @@ export function SheetBand() {
       ) : sheet.phase === 'failed' ? (
         <FaultView sheet={sheet} />
       ) : (
-        <MapTable sheet={sheet} />
+        <Boundary key={sheet.id} part="The sheet">
+          <MapTable sheet={sheet} />
+        </Boundary>
       )}
     </main>
   );
