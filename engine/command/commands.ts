@@ -151,6 +151,13 @@ export const commands: readonly CommandRule[] = [
     ],
   },
   {
+    name: 'calibrate',
+    help: 'measures this machine in a few seconds: the rates and the bandwidth that forecasts of time rest on, and the error of their model',
+    files: [0, 0],
+    options: { json },
+    examples: [['calibrate', 'prints the options that "compare" and "growth" take for this machine']],
+  },
+  {
     name: 'convert',
     help: 'writes the matrix as read: sorted, duplicates summed, full or half, in either format',
     files: [1, 1],

@@ -1,4 +1,5 @@
 import { Fault } from '../matrix/fault.ts';
+import { calibrateCommand } from './calibrateCommand.ts';
 import { commands } from './commands.ts';
 import { compareCommand } from './compareCommand.ts';
 import { factorCommand } from './factorCommand.ts';
@@ -15,6 +16,7 @@ const handlers: Readonly<Record<string, (call: Call, out: Output) => Promise<num
   compare: compareCommand,
   order: orderCommand,
   factor: factorCommand,
+  calibrate: calibrateCommand,
   growth: growthCommand,
   reconcile: reconcileCommand,
   convert: convertCommand,

@@ -45,36 +45,3 @@ export function timeOf(q: TimeQuestion): TimeForecast {
     refinementStep: figure(solve + q.matrixBytes / q.target.bandwidth, 'seconds', 'modelled'),
   };
 }
-
-/** What a run here showed, to calibrate a target with. */
-export interface Sample {
-  readonly operations: number;
-  /** seconds of the numeric phase */
-  readonly seconds: number;
-  /** mean order of the fronts, weighted by work */
-  readonly frontOrder: number;
-}
-
-/** Rates that explain samples best (least squares on seconds an operation); falls back on the mean rate where they do not differ. */
-export function calibrate(samples: readonly Sample[], target: Target): Target {
-  let a11 = 0;
-  let a12 = 0;
-  let a22 = 0;
-  let b1 = 0;
-  let b2 = 0;
-  for (const s of samples) {
-    const share = s.frontOrder / (s.frontOrder + halfWay);
-    const rate = s.operations / s.seconds;
-    a11 += (1 - share) ** 2;
-    a12 += (1 - share) * share;
-    a22 += share ** 2;
-    b1 += (1 - share) * rate;
-    b2 += share * rate;
-  }
-  const det = a11 * a22 - a12 * a12;
-  const mean = samples.reduce((sum, s) => sum + s.operations, 0) / samples.reduce((sum, s) => sum + s.seconds, 0);
-  if (!(det > 1e-6)) return { ...target, smallRate: mean, largeRate: mean };
-  const small = (b1 * a22 - b2 * a12) / det;
-  const large = (a11 * b2 - a12 * b1) / det;
-  return { ...target, smallRate: Math.max(small, mean / 20), largeRate: Math.max(large, mean) };
-}

@@ -1,5 +1,6 @@
 /** Closed forms and bounds of the forecast room. */
 import { describe, expect, it } from 'vitest';
+import { calibrate, modelErrors } from '../../engine/forecast/calibrate.ts';
 import { delayedGrowth } from '../../engine/forecast/delayed.ts';
 import { workOfFronts } from '../../engine/forecast/frontWork.ts';
 import { fitGrowth, growthAt, largestSize } from '../../engine/forecast/growth.ts';
@@ -7,7 +8,7 @@ import { listSchedule, parallelProfile, waysToRoot } from '../../engine/forecast
 import { reconcile } from '../../engine/forecast/reconcile.ts';
 import { storageOf } from '../../engine/forecast/storage.ts';
 import { defaultTarget } from '../../engine/forecast/target.ts';
-import { calibrate, rateAt } from '../../engine/forecast/time.ts';
+import { rateAt } from '../../engine/forecast/time.ts';
 import { compareWorkload, workloadSeconds } from '../../engine/forecast/workload.ts';
 import { identityOrder } from '../../engine/matrix/permutation.ts';
 import { noProgress } from '../../engine/matrix/progress.ts';
@@ -190,6 +191,31 @@ describe('time model', () => {
     const found = calibrate(samples, defaultTarget);
     expect(found.largeRate / truth.largeRate).toBeCloseTo(1, 6);
     expect(found.smallRate / truth.smallRate).toBeCloseTo(1, 6);
+    expect(Math.max(...modelErrors(samples, found))).toBeLessThan(1e-6);
+    // a model twice too slow is wrong by a factor of two
+    const slow = { ...truth, largeRate: truth.largeRate / 2, smallRate: truth.smallRate / 2 };
+    for (const error of modelErrors(samples, slow)) expect(error).toBeCloseTo(1, 9);
+  });
+
+  it('calibration on samples of many fronts each, and with nothing to tell the two rates apart', () => {
+    const truth = { ...defaultTarget, largeRate: 3e9, smallRate: 4e8 };
+    const seconds = (fronts: readonly { order: number; operations: number }[]) =>
+      fronts.reduce((sum, f) => sum + f.operations / rateAt(f.order, truth), 0);
+    const samples = [1, 2, 3].map((k) => {
+      const fronts = [8, 40, 200, 500].map((order) => ({ order, operations: 1e6 * order ** k }));
+      return {
+        operations: fronts.reduce((a, f) => a + f.operations, 0),
+        seconds: seconds(fronts),
+        frontOrder: 0,
+        fronts,
+      };
+    });
+    const found = calibrate(samples, defaultTarget);
+    expect(found.largeRate / truth.largeRate).toBeCloseTo(1, 5);
+    expect(found.smallRate / truth.smallRate).toBeCloseTo(1, 5);
+    const one = calibrate([{ operations: 1e9, seconds: 0.5, frontOrder: 100 }], defaultTarget);
+    expect(rateAt(100, one)).toBeCloseTo(2e9, -3);
+    expect(one.largeRate).toBeGreaterThanOrEqual(one.smallRate);
   });
 });
 
