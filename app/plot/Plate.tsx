@@ -16,7 +16,7 @@ export function ChartPlate(props: {
   return (
     <figure className="chart">
       <figcaption>
-        <h3>{title}</h3>
+        <h2>{title}</h2>
         <span className="chart-save small">
           <button
             type="button"
