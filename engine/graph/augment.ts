@@ -34,9 +34,9 @@ export function augmentInto(
   while (waiting > 0) {
     if (scanned >= budget) {
       progress(gained / slots, 'matching');
-      exactDistances(distance, queue, columnOf, rowOf, t, unreachable);
+      exactDistances(distance, queue, columnOf, rowOf, t, unreachable, () => progress(gained / slots, 'matching'));
       scanned = sinceCall = 0;
-    } else if (sinceCall > 1_000_000) {
+    } else if (sinceCall > 200_000) {
       progress(gained / slots, 'matching');
       sinceCall = 0;
     }
@@ -94,6 +94,7 @@ function exactDistances(
   rowOf: Int32Array,
   t: Pattern,
   unreachable: number,
+  tick: () => void,
 ): void {
   let tail = 0;
   for (let i = 0; i < distance.length; i++) {
@@ -103,6 +104,7 @@ function exactDistances(
     } else distance[i] = unreachable;
   }
   for (let head = 0; head < tail; head++) {
+    if ((head & 0xffff) === 0xffff) tick();
     const i = queue[head];
     const further = distance[i] + 1;
     const end = t.columnPointer[i + 1];

@@ -1,6 +1,9 @@
 import type { Pattern } from '../matrix/pattern.ts';
 import { noProgress, type Progress } from '../matrix/progress.ts';
 
+/** degree of a matched line; decreasing it never reaches 1 */
+const matched = -(2 ** 30);
+
 /**
  * A first matching that leaves little to improve (Karp & Sipser 1981): as long as some row or column has a single free partner left,
  * the two are matched, which never costs a pair; else the next free column takes its free row with the fewest free columns.
@@ -15,7 +18,7 @@ export function assignInto(
   progress: Progress = noProgress,
 ): number {
   const { rows, columns } = a;
-  // lines: column j is j, row i is columns + i
+  // lines: column j is j, row i is columns + i; a matched line has a degree far below 0, so that one look tells both
   const degree = new Int32Array(columns + rows);
   const waiting = new Int32Array(columns + rows);
   let top = 0;
@@ -30,54 +33,55 @@ export function assignInto(
     if (top > 0) {
       const v = waiting[--top];
       if (v < columns) {
-        if (rowOf[v] >= 0) continue;
+        if (degree[v] < 0) continue;
         j = v;
-        i = freeOf(a, j, columnOf);
+        i = freeOf(a, j, degree, columns);
       } else {
-        if (columnOf[v - columns] >= 0) continue;
+        if (degree[v] < 0) continue;
         i = v - columns;
-        j = freeOf(t, i, rowOf);
+        j = freeOf(t, i, degree, 0);
       }
       if (i < 0 || j < 0) continue;
     } else {
-      while (nextColumn < columns && (rowOf[nextColumn] >= 0 || degree[nextColumn] === 0)) nextColumn++;
+      while (nextColumn < columns && degree[nextColumn] <= 0) nextColumn++;
       if (nextColumn === columns) return size;
       j = nextColumn;
-      i = rarestRow(a, j, columnOf, degree);
+      i = rarestRow(a, j, degree);
     }
     columnOf[i] = j;
     rowOf[j] = i;
+    degree[j] = degree[columns + i] = matched;
     size++;
     if ((size & 0x7fff) === 0) progress(size / columns, 'cheap assignment');
     // the two no longer count as free partners; whoever has one left becomes urgent
     const columnEnd = a.columnPointer[j + 1];
     for (let p = a.columnPointer[j]; p < columnEnd; p++) {
       const r = a.rowIndex[p];
-      if (--degree[columns + r] === 1 && columnOf[r] < 0) waiting[top++] = columns + r;
+      if (--degree[columns + r] === 1) waiting[top++] = columns + r;
     }
     const rowEnd = t.columnPointer[i + 1];
     for (let p = t.columnPointer[i]; p < rowEnd; p++) {
       const c = t.rowIndex[p];
-      if (--degree[c] === 1 && rowOf[c] < 0) waiting[top++] = c;
+      if (--degree[c] === 1) waiting[top++] = c;
     }
   }
 }
 
-/** The first free partner of line v of `m`, −1 if there is none. */
-function freeOf(m: Pattern, v: number, partner: Int32Array): number {
-  for (let p = m.columnPointer[v]; p < m.columnPointer[v + 1]; p++)
-    if (partner[m.rowIndex[p]] < 0) return m.rowIndex[p];
+/** The first free partner of line v of `m`, −1 if there is none; lines of the other kind start at `offset`. */
+function freeOf(m: Pattern, v: number, degree: Int32Array, offset: number): number {
+  const { columnPointer, rowIndex } = m;
+  const end = columnPointer[v + 1];
+  for (let p = columnPointer[v]; p < end; p++) if (degree[offset + rowIndex[p]] >= 0) return rowIndex[p];
   return -1;
 }
 
-function rarestRow(a: Pattern, j: number, columnOf: Int32Array, degree: Int32Array): number {
+function rarestRow(a: Pattern, j: number, degree: Int32Array): number {
   let best = -1;
   let fewest = 0;
   for (let p = a.columnPointer[j]; p < a.columnPointer[j + 1]; p++) {
     const i = a.rowIndex[p];
-    if (columnOf[i] >= 0) continue;
     const d = degree[a.columns + i];
-    if (best < 0 || d < fewest) {
+    if (d >= 0 && (best < 0 || d < fewest)) {
       best = i;
       fewest = d;
     }

@@ -1,4 +1,5 @@
 import type { Pattern } from '../matrix/pattern.ts';
+import { noProgress, type Progress } from '../matrix/progress.ts';
 import { requireSquare } from './square.ts';
 
 /** A partition of the vertices 0 … n − 1 into numbered classes. */
@@ -16,12 +17,13 @@ export interface Classes {
  * Union by smaller index with path halving (Tarjan & van Leeuwen 1984), so nothing but one array of length n is formed;
  * a `Graph` is a pattern too: pass `{ rows: order, columns: order, columnPointer: pointer, rowIndex: neighbour }`.
  */
-export function connectedComponents(a: Pattern): Classes {
+export function connectedComponents(a: Pattern, progress: Progress = noProgress): Classes {
   const n = requireSquare(a, 'Connected components');
   const { columnPointer, rowIndex } = a;
   const root = new Int32Array(n);
   for (let v = 0; v < n; v++) root[v] = v;
   for (let j = 0; j < n; j++) {
+    if ((j & 0xffff) === 0) progress(j / n, 'components');
     let s = j;
     const end = columnPointer[j + 1];
     for (let p = columnPointer[j]; p < end; p++) {

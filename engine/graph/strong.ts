@@ -3,6 +3,8 @@ import { noProgress, type Progress } from '../matrix/progress.ts';
 import { type Classes, sizes } from './components.ts';
 import { requireSquare } from './square.ts';
 
+const closed = 2 ** 31 - 1;
+
 /**
  * Strong components of the directed graph of a square pattern, an edge j → i for each entry (i,j); with `columnOf` (row ->
  * column matched with it, a perfect matching) the edge is j → columnOf[i], so that the graph is that of the matrix with the
@@ -19,7 +21,7 @@ export function strongComponents(
   const n = requireSquare(a, 'Strong components');
   const { columnPointer, rowIndex } = a;
   const of = new Int32Array(n).fill(-1);
-  // low[v] = 0: not seen; else the smallest visit number known to be reachable inside the open components
+  // low[v] = 0: not seen; `closed`: its component is complete; else the smallest visit number known to be reachable inside the open ones
   const low = new Int32Array(n);
   const next = columnPointer.slice(0, n);
   const path = new Int32Array(n);
@@ -49,8 +51,8 @@ export function strongComponents(
           child = w;
           break;
         }
-        // closed vertices no longer count
-        if (reach < best && of[w] < 0) best = reach;
+        // closed vertices no longer count: their number is larger than any
+        if (reach < best) best = reach;
       }
       next[v] = p;
       low[v] = best;
@@ -59,7 +61,7 @@ export function strongComponents(
         path[depth] = child;
         low[child] = visitOf[depth] = ++visit;
         open[openCount++] = child;
-        if ((visit & 0xfffff) === 0) progress(visit / n, 'strong components');
+        if ((visit & 0xffff) === 0) progress(visit / n, 'strong components');
         continue;
       }
       // v is done: visitOf[depth] is its own visit number
@@ -68,11 +70,12 @@ export function strongComponents(
         do {
           w = open[--openCount];
           of[w] = count;
+          low[w] = closed;
         } while (w !== v);
         count++;
       }
       depth--;
-      if (depth >= 0 && of[v] < 0 && best < low[path[depth]]) low[path[depth]] = best;
+      if (depth >= 0 && low[v] !== closed && best < low[path[depth]]) low[path[depth]] = best;
     }
   }
   return { count, of, size: sizes(of, count) };

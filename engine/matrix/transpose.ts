@@ -1,12 +1,14 @@
 import { entryCount, type Field, type Pattern, type SparseMatrix, valueWidth } from './pattern.ts';
+import { noProgress, type Progress } from './progress.ts';
 
 /** Pattern of Aᵀ. Linear in entries; the result is sorted whatever the order inside the columns of `a` was. */
-export function transposePattern(a: Pattern): Pattern {
+export function transposePattern(a: Pattern, progress: Progress = noProgress): Pattern {
   const { rows, columns, columnPointer, rowIndex } = a;
   const pointer = rowPointers(a);
   const next = pointer.slice(0, rows);
   const index = new Int32Array(entryCount(a));
   for (let j = 0; j < columns; j++) {
+    if ((j & 0xffff) === 0) progress(j / columns, 'transposing');
     for (let p = columnPointer[j]; p < columnPointer[j + 1]; p++) index[next[rowIndex[p]]++] = j;
   }
   return { rows: columns, columns: rows, columnPointer: pointer, rowIndex: index };

@@ -1,6 +1,7 @@
 import { type Base, notSquare } from './base.ts';
 import { type Fact, fact, markList, undefinedFact } from './fact.ts';
 import type { MirrorScan } from './mirror.ts';
+import type { Ticker } from './ticker.ts';
 import { are, counted, plural } from './wording.ts';
 
 export interface SaddlePoint {
@@ -19,14 +20,15 @@ export interface SaddlePoint {
 }
 
 /** Looks for the shape [H Bᵀ; B 0] under any numbering. By values where there are some: stored zeros are zeros here. */
-export function saddlePointFact(base: Base, scan: MirrorScan | null): Fact<SaddlePoint> {
+export function saddlePointFact(base: Base, scan: MirrorScan | null, ticker: Ticker): Fact<SaddlePoint> {
   if (scan === null) return undefinedFact(notSquare(base.matrix), 'unknowns');
+  ticker.begin('saddle point');
   const n = base.matrix.columns;
   const zero = zeroDiagonal(base);
-  const couplings = couplingCounts(base, zero);
+  const couplings = couplingCounts(base, zero, ticker);
   let joined = 0;
   for (let j = 0; j < n; j++) joined += couplings[j];
-  const block = joined === 0 ? zero : unjoined(base, zero, couplings);
+  const block = joined === 0 ? zero : unjoined(base, zero, couplings, ticker);
   const list: number[] = [];
   let zeros = 0;
   for (let i = 0; i < n; i++) {
@@ -62,11 +64,12 @@ function isZero(base: Base, p: number): boolean {
 }
 
 /** column -> its off-diagonal nonzeros in rows of `zero`; 0 for columns outside. */
-function couplingCounts(base: Base, zero: Uint8Array): Int32Array {
+function couplingCounts(base: Base, zero: Uint8Array, ticker: Ticker): Int32Array {
   const { columnPointer, rowIndex } = base.matrix;
   const count = new Int32Array(zero.length);
   for (let j = 0; j < zero.length; j++) {
     if (!zero[j]) continue;
+    ticker.add(columnPointer[j + 1] - columnPointer[j]);
     for (let p = columnPointer[j]; p < columnPointer[j + 1]; p++) {
       const i = rowIndex[p];
       if (i !== j && zero[i] && !isZero(base, p)) count[j]++;
@@ -76,13 +79,14 @@ function couplingCounts(base: Base, zero: Uint8Array): Int32Array {
 }
 
 /** A set of unknowns of `zero` no two of which are joined: greedily, least joined first, then by number. */
-function unjoined(base: Base, zero: Uint8Array, couplings: Int32Array): Uint8Array {
+function unjoined(base: Base, zero: Uint8Array, couplings: Int32Array, ticker: Ticker): Uint8Array {
   const { columnPointer, rowIndex } = base.matrix;
   const n = zero.length;
   const chosen = new Uint8Array(n);
   const blocked = new Uint8Array(n);
   for (const j of byCount(zero, couplings)) {
     let free = !blocked[j];
+    ticker.add(columnPointer[j + 1] - columnPointer[j]);
     for (let p = columnPointer[j]; p < columnPointer[j + 1] && free; p++) {
       const i = rowIndex[p];
       if (chosen[i] && !isZero(base, p)) free = false;

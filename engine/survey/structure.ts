@@ -22,10 +22,10 @@ export interface StructuralRank {
 }
 
 /** The pattern of Aᵀ, formed once and only when asked for: A itself where the pattern is symmetric. */
-export function transposeOf(base: Base, patternSymmetric: boolean): () => Pattern {
+export function transposeOf(base: Base, patternSymmetric: boolean, ticker: Ticker): () => Pattern {
   let formed: Pattern | null = patternSymmetric ? base.matrix : null;
   return () => {
-    formed ??= transposePattern(base.matrix);
+    formed ??= transposePattern(base.matrix, ticker.pass);
     return formed;
   };
 }
@@ -123,7 +123,7 @@ function classesFact(classes: Classes, one: string, many: string): Fact<Componen
 
 export function componentsOf(base: Base, ticker: Ticker): Classes {
   ticker.begin('components');
-  return connectedComponents(base.matrix);
+  return connectedComponents(base.matrix, ticker.pass);
 }
 
 export function componentsFact(classes: Classes): Fact<Components> {
@@ -181,6 +181,8 @@ export function blockFormFact(
 function blockSizes(base: Base, matching: Matching, strong: Classes, ticker: Ticker): Int32Array {
   // with the matching on the diagonal as it stands, the blocks are the strong components of A itself
   if (matching.rowOf.every((i, j) => i === j)) return strong.size;
+  // only the sizes are asked for: no need to form the orders
+  if (matching.size === base.matrix.columns) return strongComponents(base.matrix, matching.columnOf, ticker.pass).size;
   const { blocks, blockStart } = blockTriangularForm(base.matrix, ticker.pass, matching);
   const size = new Int32Array(blocks);
   for (let b = 0; b < blocks; b++) size[b] = blockStart[b + 1] - blockStart[b];

@@ -130,13 +130,14 @@ function relations(base: Base, ticker: Ticker, tell: Tell): void {
   const patternSymmetric = symmetry !== null && symmetry.unmatched === 0;
   const strong = components === null ? null : strongOf(base, components, patternSymmetric, ticker);
   tell('strongComponents', strong === null ? apart() : strongComponentsFact(strong));
-  const transposed = transposeOf(base, patternSymmetric);
+  const transposed = transposeOf(base, patternSymmetric, ticker);
   const matching = matchingOf(base, transposed, ticker);
   tell('structuralRank', structuralRankFact(base, matching, transposed));
   const blocks = tell('blocks', blockFormFact(base, base.square ? matching : null, strong, ticker));
   tell('shapes', shapesFact(base, { components, blocks: blocks.value, neighbours }));
+  ticker.begin('constrained unknowns');
   tell('constrained', constrainedFact(base, scan, ticker));
-  tell('saddlePoint', saddlePointFact(base, scan));
+  tell('saddlePoint', saddlePointFact(base, scan, ticker));
 }
 
 /** Units of `Ticker`: passes over the entries that count their work. */
