@@ -11,6 +11,8 @@ export interface AssemblyOptions {
   readonly held?: number;
   /** children in the order of least stack (Liu 1986); default true, else in postorder */
   readonly bestChildren?: boolean;
+  /** how the contribution blocks of that stack are kept: packed lower triangles (default), or square, as LU keeps them */
+  readonly blocks?: 'packed' | 'square';
 }
 
 /**
@@ -34,7 +36,7 @@ export function assemblyTree(factor: SymbolicFactor, options: AssemblyOptions = 
   const forest = forestOf(first, parent, columnCount, held);
   const fixed = held > 0 ? forest.parent.length - 1 : -1;
   const { into, sizes } = amalgamate(forest, options.amalgamation ?? usualAmalgamation, fixed);
-  const walk = walkOrder(into, sizes, forest.parent, options.bestChildren ?? true, fixed);
+  const walk = walkOrder(into, sizes, forest.parent, options, fixed);
   const tree = lay(walk, into, sizes, forest, first);
   const order = composeOrders(factor.order, composeOrders(asNewToOld(post), asNewToOld(tree.columnOrder)));
   let storedFactorEntries = 0;
@@ -79,9 +81,11 @@ function walkOrder(
   into: Int32Array,
   sizes: NodeForest,
   oldParent: Int32Array,
-  best: boolean,
+  options: AssemblyOptions,
   fixed: number,
 ): Int32Array {
+  const best = options.bestChildren ?? true;
+  const square = options.blocks === 'square';
   const count = into.length;
   const parentOf = (s: number): number => (oldParent[s] < 0 ? -1 : into[oldParent[s]]);
   const firstChild = new Int32Array(count).fill(-1);
@@ -105,7 +109,7 @@ function walkOrder(
   for (let s = 0; s < count; s++) {
     if (into[s] !== s) continue;
     const rest = sizes.frontOrder[s] - sizes.columns[s];
-    block[s] = (rest * (rest + 1)) / 2;
+    block[s] = square ? rest * rest : (rest * (rest + 1)) / 2;
     sorted.length = 0;
     for (let c = firstChild[s]; c >= 0; c = nextChild[c]) sorted.push(c);
     if (best && sorted.length > 1) sorted.sort((a, b) => need[b] - block[b] - (need[a] - block[a]) || a - b);

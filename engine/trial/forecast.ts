@@ -20,7 +20,10 @@ export function treeOf(context: TrialContext, trial: TrialResult): AssemblyTree 
     treeHeight: trial.counts.treeHeight ?? 0,
     largestFront: trial.counts.largestFront ?? 0,
   };
-  return assemblyTree(symbolic, { held: context.input.heldLast?.length ?? 0 });
+  return assemblyTree(symbolic, {
+    held: context.input.heldLast?.length ?? 0,
+    blocks: trial.choice.factorization === 'lu' ? 'square' : 'packed',
+  });
 }
 
 /**

@@ -53,7 +53,7 @@ export function frontMeasure(
   const symbolic = analyseGraph(graph, order, { postorder: false, heldLast: held });
   if (measure === 'entries') return symbolic.factorEntries;
   if (measure === 'operations') return factorOperations(kind, symbolic.columnCount, arithmetic);
-  const tree = assemblyTree(symbolic, { held });
+  const tree = assemblyTree(symbolic, { held, blocks: kind === 'lu' ? 'square' : 'packed' });
   if (measure === 'critical-path') {
     return waysToRoot(tree.parent, workOfFronts(kind, tree, arithmetic)).reduce((a, b) => Math.max(a, b), 0);
   }

@@ -124,7 +124,10 @@ function analyseFronts(context: TrialContext, trial: TrialResult, options: Proof
   const graph = frontGraph(context, plan);
   const held = context.input.heldLast?.length ?? 0;
   const symbolic = analyseGraph(graph, trial.effective, { postorder: false, heldLast: held });
-  const tree = assemblyTree(symbolic, { amalgamation: options.amalgamation ?? usualAmalgamation });
+  const tree = assemblyTree(symbolic, {
+    amalgamation: options.amalgamation ?? usualAmalgamation,
+    blocks: kind === 'lu' ? 'square' : 'packed',
+  });
   const entries = matrix.rowIndex.length;
   const peak = predictPeakBytes(tree, {
     kind,
