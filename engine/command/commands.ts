@@ -1,7 +1,8 @@
 import { orderingNames } from '../trial/choice.ts';
 import { targetOptions, workloadOptions } from './forecastOptions.ts';
-import { format, json, ordering, out, read, storage, trialOptions } from './options.ts';
+import { besideOptions, format, json, ordering, out, read, storage, trialOptions } from './options.ts';
 import type { CommandRule } from './parse.ts';
+import { recipeIn, recipeOut } from './recipeFile.ts';
 
 /** The words of the command line. Checks of other programs are built on them: keep them stable. */
 export const commands: readonly CommandRule[] = [
@@ -40,6 +41,7 @@ export const commands: readonly CommandRule[] = [
         value: 'BYTES',
         help: 'what a run in the page may use, for the line that says whether it can run it; default 6GiB',
       },
+      'recipe-out': recipeOut,
       json,
     },
     examples: [
@@ -80,6 +82,7 @@ export const commands: readonly CommandRule[] = [
         help: 'the order as the method gave it, or postordered as the counts assume; default effective',
       },
       ...trialOptions,
+      'recipe-out': recipeOut,
     },
     examples: [
       ['order bridge.mtx --ordering nested-dissection --out order.txt', '1-based, new-to-old, postordered'],
@@ -156,6 +159,41 @@ export const commands: readonly CommandRule[] = [
     files: [0, 0],
     options: { json },
     examples: [['calibrate', 'prints the options that "compare" and "growth" take for this machine']],
+  },
+  {
+    name: 'replay',
+    help: 'runs a recipe again on its matrix: the same numbers, or which ones differ (status 4)',
+    files: [1, 1],
+    options: { recipe: recipeIn, ...besideOptions, read, json },
+    examples: [
+      ['compare bridge.mtx --recipe-out bridge-recipe.json', 'writes the recipe; the page opens it too'],
+      ['replay bridge.mtx --recipe bridge-recipe.json', 'the numbers again, on any machine'],
+    ],
+  },
+  {
+    name: 'gate',
+    help: 'the choice of a recipe on a matrix of today, held against limits: status 5 when one is passed, and by how much',
+    files: [1, 1],
+    options: {
+      recipe: recipeIn,
+      'max-factor-bytes': { kind: 'bytes', value: 'BYTES', help: 'most bytes of the factors in compressed columns' },
+      'max-peak-bytes': {
+        kind: 'bytes',
+        value: 'BYTES',
+        help: "most bytes at the peak of a run, fronts with their stack, on the recipe's target",
+      },
+      'max-operations': { kind: 'number', low: 0, value: 'N', help: 'most operations of the factorization' },
+      trial: { kind: 'text', value: 'NAME|all', help: 'trial of the recipe to watch; default the chosen one' },
+      ...besideOptions,
+      read,
+      json,
+    },
+    examples: [
+      [
+        'gate bridge.mtx --recipe bridge-recipe.json --max-peak-bytes 4GiB --max-operations 2e12',
+        'in the tests of a simulation code: fails when a change of the model makes the factorization too dear',
+      ],
+    ],
   },
   {
     name: 'convert',

@@ -14,11 +14,10 @@ import { compareText } from './compareText.ts';
 import { targetOf, workloadOf } from './forecastOptions.ts';
 import { choiceOf, loadReadings, matrixJson, matrixLine } from './load.ts';
 import { jsonText, type Output } from './output.ts';
+import { usualPageMemory } from './pageMemory.ts';
 import type { Call } from './parse.ts';
+import { recipeOfTrials, writeRecipe } from './recipeFile.ts';
 import { type ComparedTrial, comparedJson } from './trialJson.ts';
-
-/** What a run in the page may use, where the call does not say: three quarters of 8 GiB, as the page reckons. */
-const usualPageMemory = 6 * 2 ** 30;
 
 /** `compare FILE`: one trial for each ordering, forecast only. */
 export async function compareCommand(call: Call, out: Output): Promise<number> {
@@ -50,6 +49,19 @@ export async function compareCommand(call: Call, out: Output): Promise<number> {
   const totals = costs.length === 0 ? { lines: [], breakEvens: [], remark: null } : compareWorkload(costs, workload);
   const advised = trials.map(({ name, result, forecast }) => ({ ...result, name, forecast }));
   const advice = adviceFor(context.facts, base.factorization, advised, target, workload);
+  const recipe = call.text('recipe-out');
+  if (recipe !== null) {
+    const named = trials.map(({ name, direction, result, forecast }) => ({
+      name,
+      context: direction === 'old-to-new' && other !== null ? other : context,
+      result,
+      peakBytes: forecast?.peak.bytes ?? null,
+    }));
+    if (other !== null && names.includes('imported')) throw undecidedForRecipe();
+    const made = await recipeOfTrials(call, loaded, named, advice.best ?? named[0].name, target, workload);
+    await writeRecipe(recipe, made, out);
+    notes.push(`${recipe}: recipe of ${named.length} trials, ${made.chosen} chosen.`);
+  }
   if (call.flag('json')) {
     out.line(
       jsonText({
@@ -121,4 +133,12 @@ function directionNote(trials: readonly ComparedTrial[]): string {
   const hint =
     x === null || y === null || x === y ? '' : ` The lower fill of "${x < y ? a.name : b.name}" is only a hint.`;
   return `The permutation does not say its direction, so both readings are forecast: say --permutation-direction to confirm one.${hint}`;
+}
+
+function undecidedForRecipe(): Fault {
+  return new Fault(
+    'input',
+    'permutation-direction',
+    'A recipe needs one reading of the permutation: say --permutation-direction new-to-old or old-to-new.',
+  );
 }

@@ -3,12 +3,14 @@ import { calibrateCommand } from './calibrateCommand.ts';
 import { commands } from './commands.ts';
 import { compareCommand } from './compareCommand.ts';
 import { factorCommand } from './factorCommand.ts';
+import { gateCommand } from './gateCommand.ts';
 import { growthCommand } from './growthCommand.ts';
 import { combineCommand, convertCommand, differenceCommand } from './matrixCommands.ts';
 import { orderCommand } from './orderCommand.ts';
 import type { Output } from './output.ts';
 import { type Call, helpText, parseCall } from './parse.ts';
 import { reconcileCommand } from './reconcileCommand.ts';
+import { replayCommand } from './replayCommand.ts';
 import { surveyCommand } from './surveyCommand.ts';
 
 const handlers: Readonly<Record<string, (call: Call, out: Output) => Promise<number>>> = {
@@ -19,6 +21,8 @@ const handlers: Readonly<Record<string, (call: Call, out: Output) => Promise<num
   calibrate: calibrateCommand,
   growth: growthCommand,
   reconcile: reconcileCommand,
+  replay: replayCommand,
+  gate: gateCommand,
   convert: convertCommand,
   combine: combineCommand,
   difference: differenceCommand,

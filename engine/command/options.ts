@@ -65,6 +65,16 @@ const held: OptionRule = {
 };
 const seed: OptionRule = { kind: 'integer', low: 1, high: 2 ** 31 - 2, help: 'seed of every random choice; default 1' };
 
+/** What comes beside a matrix that a recipe speaks of. */
+export const besideOptions: Readonly<Record<string, OptionRule>> = {
+  permutation,
+  'permutation-direction': permutationDirection,
+  'permutation-base': permutationBase,
+  'permutation-vector': permutationVector,
+  coordinates,
+  'unknowns-per-node': unknownsPerNode,
+};
+
 /** What shapes a trial; shared by the commands that make one. */
 export const trialOptions: Readonly<Record<string, OptionRule>> = {
   factorization,

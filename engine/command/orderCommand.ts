@@ -1,9 +1,13 @@
 import { type Direction, permutationFormula, writePermutation } from '../exchange/writePermutation.ts';
+import { defaultTarget, defaultWorkload } from '../forecast/target.ts';
 import { Fault } from '../matrix/fault.ts';
+import { forecastTrial } from '../trial/forecast.ts';
 import { runTrial } from '../trial/run.ts';
 import { choiceOf, loadContext, orderingOf } from './load.ts';
 import type { Output } from './output.ts';
+import { usualPageMemory } from './pageMemory.ts';
 import type { Call } from './parse.ts';
+import { recipeOfTrials, writeRecipe } from './recipeFile.ts';
 
 /** `order FILE --ordering NAME --out FILE`: writes a permutation. */
 export async function orderCommand(call: Call, out: Output): Promise<number> {
@@ -27,6 +31,17 @@ export async function orderCommand(call: Call, out: Output): Promise<number> {
     path,
     writePermutation(which === 'requested' ? trial.requested : trial.effective, { direction, base, format, title }),
   );
+  const recipe = call.text('recipe-out');
+  if (recipe !== null) {
+    const peakBytes = forecastTrial(context, trial, defaultTarget, usualPageMemory)?.peak.bytes ?? null;
+    const named = { name: ordering, context, result: trial, peakBytes };
+    await writeRecipe(
+      recipe,
+      await recipeOfTrials(call, loaded, [named], ordering, defaultTarget, defaultWorkload),
+      out,
+    );
+    out.line(`${recipe}: recipe of this order.`);
+  }
   out.line(`${path}: ${title}`);
   out.line(permutationFormula(direction, base));
   for (const note of trial.notes) out.line(note);
