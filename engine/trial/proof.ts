@@ -1,9 +1,10 @@
 import { Fault } from '../matrix/fault.ts';
 import type { SparseMatrix } from '../matrix/pattern.ts';
 import { noProgress, type Progress } from '../matrix/progress.ts';
+import { transpose } from '../matrix/transpose.ts';
 import { type AccuracyCard, type AccuracyOptions, measureAccuracy } from '../numeric/accuracy/card.ts';
-import { factorizeColumns } from '../numeric/column/columnFactor.ts';
-import { factorizeFronts } from '../numeric/fronts/frontFactor.ts';
+import { type ColumnFactor, factorizeColumns } from '../numeric/column/columnFactor.ts';
+import { type FrontFactor, factorizeFronts } from '../numeric/fronts/frontFactor.ts';
 import { predictPeakBytes } from '../numeric/fronts/plan.ts';
 import type { PivotReport, Solver } from '../numeric/solver.ts';
 import { type Amalgamation, usualAmalgamation } from '../symbolic/amalgamate.ts';
@@ -25,6 +26,12 @@ export interface ProofOptions {
   readonly amalgamation?: Amalgamation;
   /** bytes the run may take by its forecast; default no limit. More is refused before anything is allocated */
   readonly memoryLimit?: number;
+  /** `single`: factors kept in single precision, residuals and corrections in double; fronts only. Default double */
+  readonly precision?: 'double' | 'single';
+  /** solves Aᵀ·x = b with the factors of A (transposed, not conjugated); default false */
+  readonly transposed?: boolean;
+  /** seed of the random right-hand sides; default 1 */
+  readonly seed?: number;
 }
 
 /** What a numeric run showed, beside what was forecast. Plain data. */
@@ -62,43 +69,98 @@ export function runProof(
   options: ProofOptions = {},
   progress: Progress = noProgress,
 ): Proof {
-  const why = whyNoProof(context.facts, trial.choice);
-  if (why !== null) throw new Fault('input', 'proof-impossible', why);
   const t0 = now();
-  const analysis = trial.choice.factorization === 'column-lu' ? null : analyseFronts(context, trial, options);
-  const t1 = now();
-  const numeric: Progress = (fraction, phase) => progress(0.7 * fraction, phase);
-  const solver = analysis === null ? runColumns(context.input.matrix, trial, numeric) : analysis.factorize(numeric);
+  const made = factorizeTrial(context, trial, options, (fraction, phase) => progress(0.7 * fraction, phase));
   const t2 = now();
+  const { matrix } = context.input;
   const measured = measureAccuracy(
-    context.input.matrix,
-    solver,
+    options.transposed === true ? transpose(matrix) : matrix,
+    options.transposed === true ? transposedSolver(made.solver) : made.solver,
     {
       ...(options.rightHandSides === undefined ? {} : { rightHandSides: options.rightHandSides }),
       ...(options.refine === undefined ? {} : { steps: options.refine }),
+      ...(options.seed === undefined ? {} : { seed: options.seed }),
     },
     (fraction, phase) => progress(0.7 + 0.3 * fraction, phase),
   );
   const t3 = now();
-  const { report } = solver;
+  const { report } = made.solver;
   return {
     card: measured.card,
     report,
     forecast: {
       factorEntries: trial.counts.factorEntries,
       operations: trial.counts.operations,
-      storedFactorEntries: analysis?.stored ?? null,
-      peakBytes: analysis?.peakBytes ?? null,
+      storedFactorEntries: made.stored,
+      peakBytes: made.peakBytes,
     },
     operations:
       report.storedFactorEntries === report.factorEntries ? report.executedOperations : trial.counts.operations,
     seconds: {
       ordering: trial.seconds.ordering,
-      symbolic: trial.seconds.symbolic + (t1 - t0),
-      numeric: t2 - t1,
+      symbolic: trial.seconds.symbolic + made.analysisSeconds,
+      numeric: t2 - t0 - made.analysisSeconds,
       solve: t3 - t2,
     },
     solutions: measured.solutions,
+  };
+}
+
+/** The factors of a trial, before anything is solved with them. */
+export interface FactorizedTrial {
+  readonly solver: FrontFactor | ColumnFactor;
+  /** forecast entries with padding; null for column LU */
+  readonly stored: number | null;
+  /** forecast high-water mark of the run, bytes; null for column LU, whose storage grows with the pivots */
+  readonly peakBytes: number | null;
+  readonly analysisSeconds: number;
+}
+
+/**
+ * Runs the numeric factorization of a finished trial.
+ * @param held unknowns at the end that are not eliminated: their Schur complement is then in the factor, which cannot solve. Default 0
+ * @throws Fault "proof-impossible"; "memory"; "not-completed" with original rows
+ */
+export function factorizeTrial(
+  context: TrialContext,
+  trial: TrialResult,
+  options: Pick<ProofOptions, 'amalgamation' | 'memoryLimit' | 'precision'> = {},
+  progress: Progress = noProgress,
+  held = 0,
+): FactorizedTrial {
+  const why = whyNoProof(context.facts, trial.choice);
+  if (why !== null) throw new Fault('input', 'proof-impossible', why);
+  if (trial.choice.factorization === 'column-lu') {
+    if (options.precision === 'single' || held > 0) {
+      const what = held > 0 ? 'A Schur complement' : 'Single precision';
+      throw new Fault(
+        'input',
+        'proof-impossible',
+        `${what} is made on fronts: choose LU on fronts instead of column LU.`,
+      );
+    }
+    const solver = runColumns(context.input.matrix, trial, progress);
+    return { solver, stored: null, peakBytes: null, analysisSeconds: 0 };
+  }
+  const t0 = now();
+  const analysis = analyseFronts(context, trial, options, held);
+  const analysisSeconds = now() - t0;
+  return {
+    solver: analysis.factorize(progress),
+    stored: analysis.stored,
+    peakBytes: analysis.peakBytes,
+    analysisSeconds,
+  };
+}
+
+/** The same factors, solving with Aᵀ where they solved with A. */
+function transposedSolver(solver: Solver): Solver {
+  return {
+    size: solver.size,
+    complex: solver.complex,
+    report: solver.report,
+    solveInPlace: (x, columns) => solver.solveTransposedInPlace(x, columns),
+    solveTransposedInPlace: (x, columns) => solver.solveInPlace(x, columns),
   };
 }
 
@@ -106,11 +168,16 @@ interface FrontAnalysis {
   readonly tree: AssemblyTree;
   readonly stored: number;
   readonly peakBytes: number;
-  factorize(progress: Progress): Solver;
+  factorize(progress: Progress): FrontFactor;
 }
 
 /** Assembly tree and memory of a front factorization; refuses by the forecast. */
-function analyseFronts(context: TrialContext, trial: TrialResult, options: ProofOptions): FrontAnalysis {
+function analyseFronts(
+  context: TrialContext,
+  trial: TrialResult,
+  options: Pick<ProofOptions, 'amalgamation' | 'memoryLimit' | 'precision'>,
+  schur: number,
+): FrontAnalysis {
   const { choice, plan } = trial;
   const kind = choice.factorization as 'cholesky' | 'ldlt' | 'lu';
   const { matrix } = context.input;
@@ -155,6 +222,8 @@ function analyseFronts(context: TrialContext, trial: TrialResult, options: Proof
           kind,
           hermitian: context.facts.complex && context.facts.hermitian && !context.facts.valueSymmetric,
           pivoting: choice.pivoting,
+          precision: options.precision ?? 'double',
+          schur,
           ...(choice.pivoting === 'threshold' ? { threshold: choice.threshold } : {}),
           ...(plan.rowScaling === null ? {} : { rowScale: plan.rowScaling }),
           ...(plan.columnScaling === null || kind !== 'lu' ? {} : { columnScale: plan.columnScaling }),
@@ -165,7 +234,7 @@ function analyseFronts(context: TrialContext, trial: TrialResult, options: Proof
   };
 }
 
-function runColumns(matrix: SparseMatrix, trial: TrialResult, progress: Progress): Solver {
+function runColumns(matrix: SparseMatrix, trial: TrialResult, progress: Progress): ColumnFactor {
   const { choice, plan } = trial;
   return factorizeColumns(
     matrix,
