@@ -3,7 +3,7 @@ import type { AssemblyTree } from '../symbolic/types.ts';
 
 /** What a factorization costs when a share of the pivots is handed up once. Modelled. */
 export interface DelayedRow {
-  /** share of the pivots of each front that fail there */
+  /** share of the pivots, over all fronts that can hand them on, that fail in their front */
   readonly share: number;
   readonly storedFactorEntries: number;
   readonly operations: number;
@@ -18,8 +18,8 @@ interface EntryWidths {
 }
 
 /**
- * Modelled growth when in every front that has a parent the given share of its pivots (rounded up from one half) is delayed to it: the
- * parent's front grows by that many rows and pivots. Roots take what comes.
+ * Modelled growth when in every front that has a parent the given share of its pivots is delayed to it: the parent's front grows by that many
+ * rows and pivots. Fractions are carried on from front to front, so that the share holds over all of them. Roots take what comes.
  */
 export function delayedGrowth(
   kind: FactorKind,
@@ -33,10 +33,13 @@ export function delayedGrowth(
     let stored = 0;
     let operations = 0;
     let subscripts = 0;
+    let carried = 0;
     for (let s = 0; s < tree.count; s++) {
       const planned = tree.firstColumn[s + 1] - tree.firstColumn[s] + extra[s];
       const m = tree.frontOrder[s] + extra[s];
-      const handed = tree.parent[s] < 0 ? 0 : Math.round(share * planned);
+      const wanted = tree.parent[s] < 0 ? 0 : share * planned + carried;
+      const handed = Math.min(planned, Math.floor(wanted));
+      if (tree.parent[s] >= 0) carried = wanted - handed;
       const p = planned - handed;
       if (tree.parent[s] >= 0) extra[tree.parent[s]] += handed;
       const half = p * m - (p * (p - 1)) / 2;

@@ -114,6 +114,51 @@ describe('storage', () => {
   });
 });
 
+describe('stack', () => {
+  /** Least stack over every order of the children of every node, by trying all. */
+  function leastStack(tree: ReturnType<typeof treeOf>['tree'], square: boolean): number {
+    const children: number[][] = Array.from({ length: tree.count }, () => []);
+    const roots: number[] = [];
+    for (let s = 0; s < tree.count; s++) (tree.parent[s] < 0 ? roots : children[tree.parent[s]]).push(s);
+    const block = (s: number): number => {
+      const rest = tree.frontOrder[s] - (tree.firstColumn[s + 1] - tree.firstColumn[s]);
+      return square ? rest * rest : (rest * (rest + 1)) / 2;
+    };
+    const orders = (list: readonly number[]): number[][] =>
+      list.length < 2 ? [[...list]] : list.flatMap((x) => orders(list.filter((y) => y !== x)).map((o) => [x, ...o]));
+    const need = (s: number): number => {
+      let least = Number.POSITIVE_INFINITY;
+      const needs = new Map(children[s].map((c) => [c, need(c)]));
+      for (const order of orders(children[s])) {
+        let held = 0;
+        let peak = 0;
+        for (const c of order) {
+          peak = Math.max(peak, held + (needs.get(c) ?? 0));
+          held += block(c);
+        }
+        least = Math.min(least, Math.max(peak, held + block(s)));
+      }
+      return least;
+    };
+    return Math.max(...roots.map(need));
+  }
+
+  it('Liu’s order of children is the best of all orders, packed and square (seeds 1 to 25)', () => {
+    for (let seed = 1; seed <= 25; seed++) {
+      const n = 24;
+      const a = randomPattern({ rows: n, columns: n, entries: 34, seed });
+      const factor = analyse(a, randomOrder(n, seed), { postorder: true });
+      for (const blocks of ['packed', 'square'] as const) {
+        const tree = assemblyTree(factor, { amalgamation: noAmalgamation, blocks });
+        const counts = new Int32Array(tree.count);
+        for (let s = 0; s < tree.count; s++) if (tree.parent[s] >= 0) counts[tree.parent[s]]++;
+        if (counts.some((c) => c > 7)) continue;
+        expect(stackPeak(tree, { blocks, parent: 'before' })).toBe(leastStack(tree, blocks === 'square'));
+      }
+    }
+  });
+});
+
 describe('parallelism', () => {
   it('list schedule: not below the larger of path and fair share, not above Graham’s bound W/p + (1 − 1/p)·path (Graham 1969, Brent 1974)', () => {
     for (let seed = 1; seed <= 20; seed++) {
@@ -287,6 +332,26 @@ describe('reconcile', () => {
 });
 
 describe('delayed pivots', () => {
+  it('a chain of fronts: the share holds over all of them, fractions carried on', () => {
+    // fronts of one pivot and order 2: a fifth of the pivots of the first 50 are handed on, so every fifth front hands one up
+    const count = 51;
+    const chain = {
+      size: count,
+      count,
+      order: identityOrder(count),
+      firstColumn: Int32Array.from({ length: count + 1 }, (_, s) => s),
+      parent: Int32Array.from({ length: count }, (_, s) => (s + 1 < count ? s + 1 : -1)),
+      frontOrder: Int32Array.from({ length: count }, (_, s) => (s + 1 < count ? 2 : 1)),
+      storedFactorEntries: 101,
+      factorEntries: 101,
+    };
+    const [plan, fifth] = delayedGrowth('ldlt', chain, 'real', { valueBytes: 8, indexBytes: 4 }, [0, 0.2]);
+    expect(plan.storedFactorEntries).toBe(101);
+    // a pivot handed on costs one row more in its parent, and is eliminated there
+    expect(fifth.storedFactorEntries).toBeGreaterThan(101);
+    expect(fifth.storedFactorEntries).toBeLessThan(101 + 3 * 15);
+  });
+
   it('none delayed is the plan; more delayed is never less', () => {
     for (let seed = 1; seed <= 10; seed++) {
       const { factor, tree } = treeOf(seed);

@@ -1,31 +1,13 @@
 /** The elimination tree of AᵀA without AᵀA: against elimination on sets of the product, and what its postorder leaves as it is. */
 import { describe, expect, it } from 'vitest';
-import type { Pattern } from '../../engine/matrix/pattern.ts';
 import { asNewToOld, composeOrders } from '../../engine/matrix/permutation.ts';
 import { columnTree } from '../../engine/symbolic/columnTree.ts';
 import { luCounts } from '../../engine/symbolic/luCounts.ts';
 import { postorder } from '../../engine/symbolic/postorder.ts';
 import { rowMergeBound } from '../../engine/symbolic/rowMerge.ts';
 import { naiveElimination } from '../support/elimination.ts';
+import { productPattern } from '../support/product.ts';
 import { randomOrder, randomPattern } from '../support/random.ts';
-
-/** Pattern of AᵀA by rows of A. */
-function product(a: Pattern): Pattern {
-  const rows: number[][] = Array.from({ length: a.rows }, () => []);
-  for (let j = 0; j < a.columns; j++) {
-    for (let p = a.columnPointer[j]; p < a.columnPointer[j + 1]; p++) rows[a.rowIndex[p]].push(j);
-  }
-  const columns = Array.from({ length: a.columns }, () => new Set<number>());
-  for (const row of rows) for (const j of row) for (const i of row) columns[j].add(i);
-  const columnPointer = [0];
-  const rowIndex: number[] = [];
-  for (const c of columns) {
-    rowIndex.push(...[...c].sort((x, y) => x - y));
-    columnPointer.push(rowIndex.length);
-  }
-  const { columns: n } = a;
-  return { rows: n, columns: n, columnPointer: Int32Array.from(columnPointer), rowIndex: Int32Array.from(rowIndex) };
-}
 
 describe('column tree', () => {
   for (let seed = 1; seed <= 30; seed++) {
@@ -34,7 +16,7 @@ describe('column tree', () => {
       const rows = Math.max(1, columns + ((seed * 7) % 11) - 5);
       const a = randomPattern({ rows, columns, entries: Math.floor(rows * (0.5 + (seed % 4))), seed });
       const order = randomOrder(columns, seed + 40);
-      expect([...columnTree(a, order)]).toEqual(naiveElimination(product(a), order).parent);
+      expect([...columnTree(a, order)]).toEqual(naiveElimination(productPattern(a), order).parent);
     });
     it(`its postorder leaves the row-merge bound and the count without interchanges as they are (seed ${seed})`, () => {
       const n = 3 + 2 * (seed % 23);

@@ -5,7 +5,12 @@
 import { describe, expect, it } from 'vitest';
 import type { Pattern } from '../../engine/matrix/pattern.ts';
 import { identityOrder } from '../../engine/matrix/permutation.ts';
+import { noProgress } from '../../engine/matrix/progress.ts';
+import { columnMinimumDegree } from '../../engine/ordering/columnMinimumDegree.ts';
+import { minimumDegree } from '../../engine/ordering/minimumDegree.ts';
+import { analyse } from '../../engine/symbolic/analyse.ts';
 import { rowMergeBound } from '../../engine/symbolic/rowMerge.ts';
+import { productPattern } from '../support/product.ts';
 import { randomOrder, randomPattern } from '../support/random.ts';
 import { figures, readableNames, readReference } from '../support/reference.ts';
 
@@ -58,6 +63,28 @@ describe('row-merge bound', () => {
       const bound = rowMergeBound(a, identityOrder(a.columns));
       expect(bound.upperEntries).toBeLessThanOrEqual(normal.factorEntries);
       if (a.rows >= a.columns) expect(bound.upperEntries).toBeGreaterThan(0.3 * normal.factorEntries);
+    });
+  }
+
+  for (const name of readableNames()) {
+    const f = figures[name];
+    if (f.rows !== f.columns || f.symmetry !== 'general' || f.rows > 1300) continue;
+    it(`${name}: row by row of U never above the factor of AᵀA, in every ordering (George & Ng 1985)`, () => {
+      const a = readReference(name);
+      const product = productPattern(a);
+      const orders = [
+        identityOrder(a.columns),
+        randomOrder(a.columns, 3),
+        minimumDegree(a, {}, noProgress).order,
+        columnMinimumDegree(a, {}, noProgress).order,
+      ];
+      for (const order of orders) {
+        const bound = rowMergeBound(a, order);
+        const { columnCount } = analyse(product, order, { postorder: false });
+        let beyond = 0;
+        for (let k = 0; k < a.columns; k++) if (bound.upper[k] > columnCount[k]) beyond++;
+        expect(beyond).toBe(0);
+      }
     });
   }
 });

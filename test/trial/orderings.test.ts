@@ -147,6 +147,17 @@ describe('pairs for 2×2 pivots (Duff & Pralet 2005)', () => {
       });
     }
   }
+  it('unknowns held last are in no pair and stay last', () => {
+    const held = Int32Array.of(4, kkt.columns - 1);
+    const context = new TrialContext({ ...plainInput(kkt), heldLast: held });
+    for (const name of ['minimum-degree', 'nested-dissection', 'sloan', 'natural'] as const) {
+      const trial = runTrial(context, defaultChoice('ldlt', name, { matching: 'structural', blocks: true }));
+      const { partner } = trial.plan;
+      expect([...trial.effective.slice(-2)]).toEqual([...held]);
+      expect([...held].map((i) => partner?.[i])).toEqual([...held]);
+      expect(naiveElimination(kkt, trial.effective).factorEntries).toBe(trial.counts.factorEntries);
+    }
+  });
   it('a stored zero on the diagonal is known from values: labelled so', () => {
     const values = Float64Array.of(0, 1, 1, 2);
     const a = {

@@ -13,6 +13,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { defaultTarget } from '../../../engine/forecast/target.ts';
 import { type Graph, graphOf } from '../../../engine/graph/graph.ts';
+import type { SparseMatrix } from '../../../engine/matrix/pattern.ts';
 import { asNewToOld, type NewToOld, positionOf } from '../../../engine/matrix/permutation.ts';
 import { permute } from '../../../engine/matrix/permute.ts';
 import { relabellingOf } from '../../../engine/ordering/bestOf.ts';
@@ -20,7 +21,7 @@ import { modelProblems } from '../../../engine/problems/model.ts';
 import { columnCounts } from '../../../engine/symbolic/columnCounts.ts';
 import { eliminationTree } from '../../../engine/symbolic/eliminationTree.ts';
 import { postorder } from '../../../engine/symbolic/postorder.ts';
-import type { OrderingName } from '../../../engine/trial/choice.ts';
+import type { FactorizationName, OrderingName } from '../../../engine/trial/choice.ts';
 import { plainInput, TrialContext } from '../../../engine/trial/context.ts';
 import { forecastTrial } from '../../../engine/trial/forecast.ts';
 import { defaultChoice } from '../../../engine/trial/rules.ts';
@@ -83,20 +84,24 @@ const orderings: OrderingName[] = [
   'nested-dissection',
 ];
 const label = relabellingOf(given.columns, 1);
-for (const [name, matrix] of [
-  ['as given', given],
-  ['relabelled', permute(given, label, label)],
-] as const) {
+const relabelled = permute(given, label, label);
+const plans: readonly (readonly [string, SparseMatrix, FactorizationName, readonly OrderingName[]])[] = [
+  ['as given', given, 'cholesky', orderings],
+  ['as given', given, 'lu', ['natural', 'minimum-degree', 'nested-dissection']],
+  ['as given', given, 'column-lu', ['natural', 'minimum-degree', 'column-minimum-degree']],
+  ['relabelled', relabelled, 'cholesky', ['natural', 'minimum-degree']],
+];
+for (const [name, matrix, factorization, wanted] of plans) {
   const context = new TrialContext(plainInput(matrix));
   context.graph();
-  for (const ordering of name === 'as given' ? orderings : (['natural', 'minimum-degree'] as const)) {
-    const trial = runTrial(context, defaultChoice('cholesky', ordering));
+  for (const ordering of wanted) {
+    const trial = runTrial(context, defaultChoice(factorization, ordering));
     const t = clock();
     forecastTrial(context, trial, defaultTarget, 2 ** 32);
     const after = trial.seconds.symbolic + clock() - t;
     const entries = trial.counts.factorEntries ?? 0;
     console.log(
-      `${name}, ${ordering.padEnd(22)} ordering ${show(trial.seconds.ordering)} s, counts ${show(trial.seconds.symbolic)} s, all after ordering ${show(after)} s; factor entries ${entries.toExponential(2)}; peak of the process ${(process.resourceUsage().maxRSS / 2 ** 20).toFixed(2)} GiB`,
+      `${`${name}, ${factorization}, ${ordering}`.padEnd(44)} ordering ${show(trial.seconds.ordering)} s, counts ${show(trial.seconds.symbolic)} s, all after ordering ${show(after)} s; factor entries ${entries.toExponential(2)}; peak of the process ${(process.resourceUsage().maxRSS / 2 ** 20).toFixed(2)} GiB`,
     );
   }
 }
