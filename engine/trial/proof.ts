@@ -201,6 +201,8 @@ function analyseFronts(
     complex: context.facts.complex,
     entries,
     paired: plan.plannedRow !== null,
+    single: options.precision === 'single',
+    schur,
   });
   if (options.memoryLimit !== undefined && peak.total > options.memoryLimit) {
     throw new Fault(
