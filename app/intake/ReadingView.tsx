@@ -18,8 +18,8 @@ export function ReadingView({ sheet }: { sheet: Sheet }) {
   if (reading === null) return null;
   const { bytesDone, bytesAll, fraction, phase } = reading;
   return (
-    <Neatline className="reading">
-      <div className="reading-words">
+    <Neatline className="coming">
+      <div className="coming-words">
         <h2>Reading {sheet.name}</h2>
         <progress value={fraction} max={1} aria-label={`Reading ${sheet.name}`} />
         <p>

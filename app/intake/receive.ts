@@ -1,3 +1,4 @@
+import { ask } from '../state/questions.ts';
 import {
   changeSheet,
   currentSheet,
@@ -7,9 +8,11 @@ import {
   sheetById,
   sheetsStore,
 } from '../state/sheets.ts';
-import { follow } from '../state/tasks.ts';
-import { newMatrixKey, pool } from '../state/vault.ts';
+import { follow, stopAll } from '../state/tasks.ts';
+import { dropStock, newMatrixKey, pool } from '../state/vault.ts';
+import { packingOf } from '../unpack/packing.ts';
 import { attach, roleOf } from './attach.ts';
+import { type Piece, piecesOf } from './pieces.ts';
 import { settle } from './settle.ts';
 
 /** Where the matrix of a sheet came from, so that it can be read again in another way. */
@@ -23,30 +26,49 @@ const origins = new Map<SheetId, Origin>();
 
 /** Takes in files that were dropped or chosen together: matrices are laid out, everything else is put beside its matrix. */
 export async function receive(files: readonly File[]): Promise<void> {
-  if (files.length === 1 && currentReady() === null) {
-    layOutFile(files[0]);
+  if (files.length === 0) return;
+  const host = currentReady();
+  if (files.length === 1 && host === null && !(await isPacked(files[0]))) {
+    layOutFile(files[0], null);
     return;
   }
-  const seen = await Promise.all(
-    files.map(async (file) => {
-      const reply = await pool.run('inspect', { file }, { lane: 'quick' }).reply;
-      return { file, role: reply.ok ? reply.value.role : 'unknown' };
-    }),
-  );
-  const matrices = seen.filter(({ role }) => role === 'matrix' || role === 'archive');
-  const companions = seen.filter((s) => !matrices.includes(s));
-  const laidOut = matrices.map(({ file }) => layOutFile(file));
-  const host = laidOut.length === 0 ? currentReady() : laidOut[0];
-  if (host === null) {
+  const pieces = await piecesOf(files);
+  const matrices = pieces.filter(({ role }) => role === 'matrix');
+  const companions = pieces.filter((piece) => !matrices.includes(piece));
+  const laidOut = matrices.map(({ file, member }) => layOutFile(file, member));
+  if (companions.length === 0) return;
+  const hosts = laidOut.length > 0 ? laidOut : host === null ? [] : [host];
+  if (hosts.length === 0) {
     // nothing to belong to: read as matrices, so that the reader says what they are
-    for (const { file } of companions) layOutFile(file);
+    for (const { file, member } of companions) layOutFile(file, member);
     return;
   }
-  if (!(await whenReady(host))) return;
-  for (const { file, role } of companions) {
-    const use = await roleOf(file, role, sheetById(host)?.name ?? 'the matrix');
-    if (use !== null) await attach(host, file, use);
+  for (const piece of companions) {
+    const id = await hostOf(piece, hosts);
+    if (id === null || !(await whenReady(id))) continue;
+    const use = await roleOf(piece, sheetById(id)?.name ?? 'the matrix');
+    if (use !== null) await attach(id, piece, use);
   }
+}
+
+/** gzip, zip or tar by the first bytes. */
+async function isPacked(file: File): Promise<boolean> {
+  return packingOf(new Uint8Array(await file.slice(0, 512).arrayBuffer())) !== 'none';
+}
+
+/** Name without folders and endings, in small letters. */
+const stem = (name: string) => (name.split('/').at(-1) ?? name).toLowerCase().replace(/\..*$/, '');
+
+/** The matrix a companion belongs to: the only one, the one whose name it carries, or what the user says. */
+async function hostOf(piece: Piece, hosts: readonly SheetId[]): Promise<SheetId | null> {
+  const there = hosts.flatMap((id) => sheetById(id) ?? []);
+  if (there.length < 2) return there[0]?.id ?? null;
+  const own = stem(piece.name);
+  const named = there.filter((sheet) => own !== stem(sheet.name) && own.startsWith(stem(sheet.name)));
+  const alike = named.length > 0 ? named : there.filter((sheet) => own === stem(sheet.name));
+  if (alike.length === 1) return alike[0].id;
+  const choices = there.map(({ id, name }) => ({ id, text: name }));
+  return ask(`Which matrix does ${piece.name} belong to?`, 'Several matrices came with it.', choices);
 }
 
 /** The sheet in front if its matrix is there. */
@@ -71,10 +93,10 @@ function whenReady(id: SheetId): Promise<boolean> {
   });
 }
 
-function layOutFile(file: File): SheetId {
+function layOutFile(file: File, member: string | null): SheetId {
   const key = newMatrixKey();
-  layOut(freshSheet(key, file.name, 'opening', file.size));
-  startReading(key, { file, repairs: [] });
+  layOut(freshSheet(key, member?.split('/').at(-1) ?? file.name, 'opening', file.size));
+  startReading(key, { file, repairs: member === null ? [] : [`member=${member}`] });
   return key;
 }
 
@@ -83,7 +105,9 @@ export function readAgain(id: SheetId, repair?: string): void {
   const origin = origins.get(id);
   if (origin === undefined || sheetById(id) === null) return;
   const { file } = origin;
-  changeSheet(id, () => ({ ...freshSheet(id, file.name, 'opening', file.size) }));
+  stopAll(id);
+  dropStock(id);
+  changeSheet(id, ({ name }) => ({ ...freshSheet(id, name, 'opening', file.size) }));
   startReading(id, { file, repairs: repair === undefined ? origin.repairs : [...origin.repairs, repair] });
 }
 

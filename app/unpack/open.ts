@@ -1,9 +1,11 @@
 import type { ByteSource } from '../../engine/exchange/source.ts';
 import { Fault } from '../../engine/matrix/fault.ts';
+import { packingOf } from './packing.ts';
 import { chunksOf, headOf, type Member, type RawFile, streamOf, watched } from './raw.ts';
 import { tarMember, tarMembers } from './tar.ts';
 import { zipMember, zipMembers } from './zip.ts';
 
+export { type Packing, packingOf } from './packing.ts';
 export { blobFile, type Member, type RawFile } from './raw.ts';
 
 /** An archive may unpack to at most so many times its size, once it passes `harmless` bytes: more is taken for an attack. */
@@ -11,17 +13,6 @@ export const mostExpansion = 1100;
 const harmless = 2 ** 30;
 /** archives in archives are opened to this depth */
 const deepest = 4;
-
-export type Packing = 'gzip' | 'zip' | 'tar' | 'none';
-
-/** How a file is packed, by its first bytes (RFC 1952; PKWARE APPNOTE; POSIX ustar). */
-export function packingOf(head: Uint8Array): Packing {
-  if (head[0] === 0x1f && head[1] === 0x8b) return 'gzip';
-  if (head[0] === 0x50 && head[1] === 0x4b && (head[2] === 3 || head[2] === 5)) return 'zip';
-  const ustar = [0x75, 0x73, 0x74, 0x61, 0x72];
-  if (head.length >= 262 && ustar.every((byte, k) => head[257 + k] === byte)) return 'tar';
-  return 'none';
-}
 
 /** The bytes of a gzip file, unpacked. */
 async function* gunzipped(packed: RawFile): AsyncGenerator<Uint8Array<ArrayBuffer>> {

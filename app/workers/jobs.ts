@@ -4,6 +4,7 @@ import { example, plates } from './exampleJobs.ts';
 import { forecast } from './forecastJobs.ts';
 import { convention, permutation } from './handoverJobs.ts';
 import { layMap, map, spot, whyFill } from './mapJobs.ts';
+import { combine, difference, matrixFile } from './matrixJobs.ts';
 import { prove } from './proofJobs.ts';
 import type { Answer, Ask, Early, Operation } from './protocol.ts';
 import { read } from './readJobs.ts';
@@ -30,6 +31,9 @@ export const jobs: { readonly [K in Operation]: Job<K> } = {
   read,
   inspect,
   attach,
+  matrixFile,
+  difference,
+  combine,
   example,
   survey,
   layMap,

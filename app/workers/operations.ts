@@ -1,7 +1,8 @@
-import type { Recognised } from '../../engine/exchange/recognise.ts';
+import type { FileKind, Recognised } from '../../engine/exchange/recognise.ts';
 import type { Direction, PermutationFormat } from '../../engine/exchange/writePermutation.ts';
 import type { TrialForecast } from '../../engine/forecast/forecast.ts';
 import type { Target } from '../../engine/forecast/target.ts';
+import type { MatrixDifference } from '../../engine/matrix/difference.ts';
 import type { NewToOld } from '../../engine/matrix/permutation.ts';
 import type { Survey } from '../../engine/survey/survey.ts';
 import type { Choice } from '../../engine/trial/choice.ts';
@@ -52,7 +53,31 @@ export type CompanionRole = 'permutation' | 'right-hand side' | 'labels' | 'coor
 /** A companion file is read and beside its matrix, or the user must say which way a permutation reads. */
 export type Attached =
   | { readonly kind: 'attached'; readonly change: Partial<Stock>; readonly facts: MatrixFacts; readonly says: string }
-  | { readonly kind: 'which-direction'; readonly factorEntries: Readonly<Record<Direction, number | null>> };
+  | {
+      readonly kind: 'which-direction';
+      readonly factorEntries: Readonly<Record<Direction, number | null>>;
+      /** the direction with fewer factor entries; null where both are equal or unknown */
+      readonly leaner: Direction | null;
+    };
+
+/** What a file looks like; of an archive with several members, what each of them looks like. */
+export interface Inspected extends Recognised {
+  readonly members:
+    | readonly {
+        readonly name: string;
+        readonly size: number | null;
+        readonly kind: FileKind | null;
+        readonly role: Recognised['role'];
+        readonly what: string;
+      }[]
+    | null;
+}
+
+/** One summand of a combination. */
+export interface SummandAsk {
+  readonly key: MatrixKey;
+  readonly coefficient: readonly [number, number];
+}
 
 /** Every operation of a worker: what it asks, what it answers, what it can say early. */
 export interface Operations extends MapOperations, TreeOperations {
@@ -65,13 +90,31 @@ export interface Operations extends MapOperations, TreeOperations {
     early: { bytesDone: number; bytesAll: number | null };
   };
   /** what a file looks like by its first bytes */
-  inspect: { ask: { file: File }; answer: Recognised; early: never };
+  inspect: { ask: { file: File; member: string | null }; answer: Inspected; early: never };
   /** a file that belongs to a matrix: a permutation, right-hand sides, labels or coordinates */
   attach: {
-    ask: { key: MatrixKey; file: File; role: CompanionRole; direction: Direction | null };
+    ask: {
+      key: MatrixKey;
+      file: File;
+      member: string | null;
+      role: CompanionRole;
+      direction: Direction | null;
+      /** which of two vectors in one permutation file */
+      vector: 1 | 2 | null;
+    };
     answer: Attached;
     early: never;
   };
+  /** the matrix as read, sorted and summed, as a file */
+  matrixFile: {
+    ask: { key: MatrixKey; format: 'matrix-market' | 'rutherford-boeing'; half: boolean };
+    answer: Blob;
+    early: never;
+  };
+  /** how the matrix `other` differs from the matrix `key` */
+  difference: { ask: { key: MatrixKey; other: MatrixKey }; answer: MatrixDifference; early: never };
+  /** a sum of matrices with complex coefficients, as a new matrix */
+  combine: { ask: { key: MatrixKey; name: string; terms: readonly SummandAsk[] }; answer: Arrival; early: never };
   /** a worked example made on the spot */
   example: { ask: { key: MatrixKey; id: string; size: number }; answer: Arrival; early: never };
   /** the facts of a matrix */

@@ -73,7 +73,9 @@ function market(text: string, name: string): Recognised {
   const what = 'a Matrix Market file';
   if (/\b(new-to-old|old-to-new), [01]-based/.test(head)) return { kind: 'matrix-market', what, role: 'permutation' };
   const array = /^\s*%{1,2}matrixmarket\s+matrix\s+array/i.test(head);
-  const size = /(?:^|[\r\n])\s*(\d+)\s+(\d+)\s*(?:[\r\n]|$)/.exec(head);
+  const size = /(?:^|[\r\n])[ \t]*(\d+)[ \t]+(\d+)[ \t]*(?:\d+[ \t]*)?(?:[\r\n]|$)/.exec(head);
+  if (!array && size !== null && size[2] === '1' && size[1] !== '1')
+    return { kind: 'matrix-market', what, role: roleByName(name) ?? 'right-hand side' };
   if (array && size !== null && size[1] !== size[2])
     return { kind: 'matrix-market', what, role: roleByName(name) ?? 'right-hand side' };
   return { kind: 'matrix-market', what, role: 'matrix' };
