@@ -1,13 +1,29 @@
 import { plainSource } from '../../app/unpack/open.ts';
+import type { Loaded } from '../exchange/loaded.ts';
 import { readRightHandSides } from '../exchange/readRightHandSides.ts';
+import { writeDense } from '../exchange/writeDense.ts';
 import { Fault } from '../matrix/fault.ts';
+import type { TrialContext } from '../trial/context.ts';
 import { type Proof, type ProofOptions, runProof } from '../trial/proof.ts';
 import type { TrialResult } from '../trial/result.ts';
+import { proveSecond } from '../trial/reuse.ts';
 import { whyNoProof } from '../trial/rules.ts';
 import { runTrial } from '../trial/run.ts';
+import { schurOfTrial } from '../trial/schurProof.ts';
+import { sweepThresholds } from '../trial/sweep.ts';
+import {
+  proofJson,
+  proofText,
+  reuseJson,
+  reuseText,
+  schurJson,
+  schurText,
+  sweepJson,
+  sweepText,
+} from './factorText.ts';
 import { pathFile } from './fileSource.ts';
-import { choiceOf, loadContext, matrixJson, matrixLine, orderingOf } from './load.ts';
-import { jsonText, type Output, shortBytes, shortNumber, tableText } from './output.ts';
+import { choiceOf, loadContext, loadFile, matrixJson, matrixLine, orderingOf } from './load.ts';
+import { jsonText, type Output } from './output.ts';
 import type { Call } from './parse.ts';
 
 /** `factor FILE`: 0 when done, 4 when the verdict is red. */
@@ -16,95 +32,91 @@ export async function factorCommand(call: Call, out: Output): Promise<number> {
   const choice = choiceOf(call, context, orderingOf(call, 'minimum-degree'));
   const why = whyNoProof(context.facts, choice);
   if (why !== null) throw new Fault('input', 'proof-impossible', `${loaded.name}: ${why}`, { file: loaded.name });
-  const rhs = call.text('rhs');
-  const refine = call.number('refine');
-  const limit = call.number('memory-limit');
-  const options: ProofOptions = {
-    ...(rhs === null
-      ? {}
-      : {
-          rightHandSides: await readRightHandSides(
-            await plainSource(await pathFile(rhs)),
-            loaded.matrix.rows,
-            () => {},
-          ),
-        }),
-    ...(refine === null ? {} : { refine }),
-    ...(limit === null ? {} : { memoryLimit: limit }),
-  };
+  const options = await optionsOf(call, loaded);
   const trial = runTrial(context, choice);
-  const proof = runProof(context, trial, options);
-  if (call.flag('json')) out.line(jsonText({ matrix: matrixJson(loaded), ...proofJson(trial, proof) }));
-  else {
-    out.line(matrixLine(loaded));
-    out.line('');
-    out.line(proofText(trial, proof));
+  const say = (json: Record<string, unknown>, text: string): void => {
+    if (call.flag('json')) out.line(jsonText({ matrix: matrixJson(loaded), ...json }));
+    else out.line(`${matrixLine(loaded)}\n\n${text}`);
+  };
+  if (call.flag('sweep')) {
+    const rows = sweepThresholds(context, trial, options);
+    say(sweepJson(trial, rows), sweepText(trial, rows));
+    return 0;
   }
+  if (call.text('schur-out') !== null) return schur(call, context, trial, options, say, out);
+  const second = call.text('second');
+  if (second !== null) {
+    const other = await loadFile(call, second);
+    const reuse = proveSecond(context, trial, other.matrix, options);
+    say(reuseJson(trial, reuse), reuseText(trial, reuse));
+    return reuse.card.verdict === 'red' ? 4 : 0;
+  }
+  const proof = runProof(context, trial, options);
+  await writeSolutions(call, loaded, proof, out);
+  say(proofJson(trial, proof), proofText(trial, proof));
   return proof.card.verdict === 'red' ? 4 : 0;
 }
 
-/** The run as JSON. */
-export function proofJson(trial: TrialResult, proof: Proof): Record<string, unknown> {
-  const { card, report } = proof;
-  const complex = card.determinantSign !== null && card.determinantSign[1] !== 0;
+async function optionsOf(call: Call, loaded: Loaded): Promise<ProofOptions> {
+  const rhs = call.text('rhs');
+  const refine = call.number('refine');
+  const limit = call.number('memory-limit');
+  const seed = call.number('seed');
+  if (rhs === null && call.text('solution-out') !== null) {
+    throw new Fault(
+      'input',
+      'no-right-hand-side',
+      '--solution-out writes the solutions for the right-hand sides of --rhs, and none were given: add --rhs FILE.',
+    );
+  }
+  const read = async (path: string) =>
+    readRightHandSides(await plainSource(await pathFile(path)), loaded.matrix.rows, () => {});
   return {
-    ordering: trial.choice.ordering,
-    factorization: trial.choice.factorization,
-    factorEntries: report.factorEntries,
-    operations: proof.operations,
-    storedFactorEntries: report.storedFactorEntries,
-    executedOperations: report.executedOperations,
-    peakBytes: report.peakBytes,
-    forecast: proof.forecast,
-    seconds: proof.seconds,
-    backwardError: card.backwardError,
-    unrefinedBackwardError: card.unrefinedBackwardError,
-    componentwiseBackwardError: card.componentwiseBackwardError,
-    refinement: card.refinement,
-    rightHandSides: card.rightHandSides,
-    conditionEstimate: card.conditionEstimate,
-    forwardErrorEstimate: card.forwardErrorEstimate,
-    trustedDigits: card.trustedDigits,
-    pivotGrowth: card.pivotGrowth,
-    pivots: card.pivots,
-    smallestPivot: card.smallestPivot,
-    largestPivot: card.largestPivot,
-    inertia: card.inertia,
-    logAbsDeterminant: card.logAbsDeterminant,
-    determinantSign: complex ? card.determinantSign : (card.determinantSign?.[0] ?? null),
-    verdict: card.verdict,
-    reasons: card.reasons,
-    missing: card.missing,
-    cautions: card.cautions,
-    choice: trial.choice,
-    valueDependent: trial.valueDependent,
-    notes: [...trial.notes, ...report.notes],
+    ...(rhs === null ? {} : { rightHandSides: await read(rhs) }),
+    ...(refine === null ? {} : { refine }),
+    ...(limit === null ? {} : { memoryLimit: limit }),
+    ...(seed === null ? {} : { seed }),
+    precision: call.text('precision') === 'single' ? 'single' : 'double',
+    transposed: call.flag('transposed'),
   };
 }
 
-function proofText(trial: TrialResult, proof: Proof): string {
-  const { card, report, forecast, seconds } = proof;
-  const figure = (x: number | null): string => (x === null ? '–' : x.toExponential(2));
-  const side = tableText([
-    ['', 'forecast', 'measured'],
-    ['factor entries', shortNumber(forecast.factorEntries), shortNumber(report.factorEntries)],
-    ['operations', shortNumber(forecast.operations), shortNumber(proof.operations)],
-    ['peak bytes', shortBytes(forecast.peakBytes), shortBytes(report.peakBytes)],
-  ]);
-  const lines = [
-    `${trial.choice.factorization} in the ordering ${trial.choice.ordering}, pivoting ${trial.choice.pivoting}`,
-    '',
-    side,
-    '',
-    `seconds, measured: ordering ${seconds.ordering.toFixed(3)}, symbolic ${seconds.symbolic.toFixed(3)}, numeric ${seconds.numeric.toFixed(3)}, solve ${seconds.solve.toFixed(3)}`,
-    `backward error: normwise ${figure(card.backwardError)} (${figure(card.unrefinedBackwardError)} before refinement), componentwise ${figure(card.componentwiseBackwardError)}`,
-    `condition estimate (1-norm, from below): ${figure(card.conditionEstimate)}; pivot growth ${figure(card.pivotGrowth)}`,
-    `pivots: ${card.pivots.offDiagonal} off the diagonal, ${card.pivots.delayed} delayed, ${card.pivots.twoByTwo} of order two, ${card.pivots.perturbed} perturbed`,
+async function writeSolutions(call: Call, loaded: Loaded, { solutions, card }: Proof, out: Output): Promise<void> {
+  const path = call.text('solution-out');
+  if (path === null || solutions === null) return;
+  const field = solutions.complex ? ('complex' as const) : ('real' as const);
+  const comments = [
+    `solutions x of ${call.flag('transposed') ? 'A^T' : 'A'} x = b for ${loaded.name}, in the original numbering`,
+    `verdict ${card.verdict}, normwise backward error ${card.backwardError ?? 'not finite'}`,
   ];
-  if (card.inertia !== null) lines.push(`inertia (+, −, 0): ${card.inertia.join(', ')}`);
-  lines.push(card.trustedDigits === null ? 'trusted digits: –' : `about ${card.trustedDigits} digits can be trusted`);
-  lines.push('', `verdict: ${card.verdict}`);
-  for (const reason of card.reasons) lines.push(`  ${reason}`);
-  for (const caution of card.cautions) lines.push(`  ${caution}`);
-  return lines.join('\n');
+  await out.file(
+    path,
+    writeDense({ rows: loaded.matrix.columns, columns: solutions.columns, field, values: solutions.values }, comments),
+  );
+}
+
+async function schur(
+  call: Call,
+  context: TrialContext,
+  trial: TrialResult,
+  options: ProofOptions,
+  say: (json: Record<string, unknown>, text: string) => void,
+  out: Output,
+): Promise<number> {
+  const path = call.text('schur-out') as string;
+  const failures = call.text('schur-failures') === 'perturb' ? 'perturb' : 'append';
+  const run = schurOfTrial(context, trial, failures, options);
+  const { complement } = run;
+  const { size, complex, values, rows } = complement;
+  const comments = [
+    `Schur complement onto ${size} unknowns; row and column k belong to the original unknowns (1-based):`,
+    Array.from(rows, (r) => r + 1).join(' '),
+    ...run.notes,
+  ];
+  await out.file(
+    path,
+    writeDense({ rows: size, columns: size, field: complex ? 'complex' : 'real', values }, comments),
+  );
+  say(schurJson(trial, run, path), schurText(trial, run, path));
+  return 0;
 }

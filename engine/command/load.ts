@@ -20,9 +20,14 @@ import type { Call } from './parse.ts';
 
 /** Reads the matrix a call names (its file number `which`), with its `--read` words. */
 export async function loadMatrix(call: Call, which = 0): Promise<Loaded> {
+  return loadFile(call, call.files[which]);
+}
+
+/** Reads the matrix at a path, with the call's `--read` words. */
+export async function loadFile(call: Call, path: string): Promise<Loaded> {
   let options: ReadOptions = defaultReadOptions;
   for (const word of call.texts('read')) options = applyRepair(options, word);
-  return readMatrix(await plainSource(await pathFile(call.files[which]), options.member), options, () => {});
+  return readMatrix(await plainSource(await pathFile(path), options.member), options, () => {});
 }
 
 /** The matrix with what the call gives beside it: a permutation, coordinates of mesh nodes, unknowns held last. */
