@@ -61,17 +61,24 @@ function rowMergeForest(
   const ancestor = new Int32Array(n).fill(-1);
   const lower = new Int32Array(n);
   for (let i = 0; i < a.rows; i++) if (leftmost[i] >= 0) lower[leftmost[i]]++;
+  // row -> the last column that its group is known to have joined: the way to the root is shorter from there
+  const joined = leftmost.slice();
   for (let k = 0; k < n; k++) {
     const j = columnOrder[k];
-    for (let p = a.columnPointer[j]; p < a.columnPointer[j + 1]; p++) {
-      const f = leftmost[a.rowIndex[p]];
+    for (let p = a.columnPointer[j], end = a.columnPointer[j + 1]; p < end; p++) {
+      const i = a.rowIndex[p];
+      const f = joined[i];
       let r = f;
       while (r !== k && ancestor[r] >= 0) r = ancestor[r];
-      if (r === k) continue;
+      if (r === k) {
+        joined[i] = k;
+        continue;
+      }
       // a group of one row left with it: nothing goes on, its tree keeps its root
       const goesOn = lower[r] > 1;
       shorten(ancestor, f, r, goesOn ? k : r);
       if (!goesOn) continue;
+      joined[i] = k;
       ancestor[r] = k;
       parent[r] = k;
       lower[k] += lower[r] - 1;

@@ -30,7 +30,9 @@ export function diagonalBlocks(a: Pattern, form: BlockTriangularForm, whole: boo
   const rowIndex = new Int32Array(entryCount(a) + n);
   let q = 0;
   let outside = 0;
+  let asItIs = true;
   for (let j = 0; j < n; j++) {
+    if (pairedColumn[j] !== j) asItIs = false;
     let diagonal = false;
     for (let p = a.columnPointer[j]; p < a.columnPointer[j + 1]; p++) {
       const i = pairedColumn[a.rowIndex[p]];
@@ -41,12 +43,16 @@ export function diagonalBlocks(a: Pattern, form: BlockTriangularForm, whole: boo
       if (i === j) diagonal = true;
       rowIndex[q++] = i;
     }
-    if (!diagonal) rowIndex[q++] = j;
+    if (!diagonal) {
+      rowIndex[q++] = j;
+      asItIs = false;
+    }
     columnPointer[j + 1] = q;
   }
   const unsorted = { rows: n, columns: n, columnPointer, rowIndex: rowIndex.slice(0, q) };
   return {
-    pattern: transposePattern(transposePattern(unsorted)),
+    // nothing moved, left out or added: the pattern itself
+    pattern: asItIs && outside === 0 ? a : transposePattern(transposePattern(unsorted)),
     blockOf,
     blocks: whole ? 1 : form.blocks,
     offDiagonalBlockEntries: outside,

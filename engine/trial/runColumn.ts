@@ -141,7 +141,7 @@ function squareCounts(
   const n = context.facts.columns;
   const arithmetic = context.facts.complex ? 'complex' : 'real';
   const widths = usualWidths(context.facts.complex);
-  const graph = graphOf(blocks.pattern);
+  const graph = blocks.pattern === context.input.matrix ? context.graph() : graphOf(blocks.pattern);
   const symmetrised = analyseGraph(graph, order, { postorder: false });
   const exact = diagonalPivotCounts(blocks.pattern, order, symmetrised);
   const lower = exact?.lower ?? symmetrised.columnCount;
