@@ -5,6 +5,7 @@ import { compareCommand } from './compareCommand.ts';
 import { factorCommand } from './factorCommand.ts';
 import { gateCommand } from './gateCommand.ts';
 import { growthCommand } from './growthCommand.ts';
+import { handoverCommand } from './handoverCommand.ts';
 import { combineCommand, convertCommand, differenceCommand } from './matrixCommands.ts';
 import { orderCommand } from './orderCommand.ts';
 import type { Output } from './output.ts';
@@ -21,6 +22,7 @@ const handlers: Readonly<Record<string, (call: Call, out: Output) => Promise<num
   calibrate: calibrateCommand,
   growth: growthCommand,
   reconcile: reconcileCommand,
+  handover: handoverCommand,
   replay: replayCommand,
   gate: gateCommand,
   convert: convertCommand,
@@ -39,13 +41,16 @@ function optionOf(id: string): string {
  */
 export async function dispatch(words: readonly string[], out: Output): Promise<number> {
   if (words[0] === 'help' || words.includes('--help')) {
-    out.line(helpText(commands, words[0] === 'help' ? words[1] : words[0]));
-    return 0;
+    const name = [...words].filter((word) => word !== 'help' && word !== '--help')[0];
+    if (name === undefined || commands.some((c) => c.name === name)) {
+      out.line(helpText(commands, name));
+      return 0;
+    }
   }
   // nothing reaches standard output before the work is done, so that no partial result is taken for a whole one
   const lines: string[] = [];
   try {
-    const call = parseCall(words, commands);
+    const call = parseCall(words[0] === 'help' ? words.slice(1) : words, commands);
     const status = await handlers[call.command.name](call, { ...out, line: (text) => lines.push(text) });
     for (const line of lines) out.line(line);
     return status;

@@ -53,6 +53,7 @@ export function trialJson(trial: TrialResult): Record<string, unknown> {
       envelope: 'exact',
       seconds: 'measured',
     },
+    ...(holds(trial) === null ? {} : { holds: holds(trial) }),
     rounded: { operations: (c.operations ?? 0) > 2 ** 53, factorEntries: (c.factorEntries ?? 0) > 2 ** 53 },
     valueDependent: trial.valueDependent,
     choice: trial.choice,
@@ -62,6 +63,14 @@ export function trialJson(trial: TrialResult): Record<string, unknown> {
     ...(Object.keys(reasons).length === 0 ? {} : { reasons }),
     seconds: trial.seconds,
   };
+}
+
+/** What the counts rest on where pivoting could move them; null where nothing can. */
+function holds({ choice, counts }: TrialResult): string | null {
+  if (counts.factorEntries === null || choice.pivoting !== 'threshold') return null;
+  return choice.factorization === 'column-lu'
+    ? 'while pivots stay on the planned diagonal'
+    : 'until a pivot is delayed';
 }
 
 /** The same with spread and forecast. */

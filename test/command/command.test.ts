@@ -218,6 +218,8 @@ describe('usage', () => {
   const cases: [string[], number, string][] = [
     [[], 2, 'No command'],
     [['fly'], 2, 'Unknown command'],
+    [['help', 'fly'], 2, 'Unknown command "fly"'],
+    [['fly', '--help'], 2, 'Unknown command "fly"'],
     [['survey'], 2, 'takes 1 file'],
     [['survey', 'nowhere.mtx'], 2, 'cannot be read'],
     [['compare', referencePath('bcsstk01.mtx'), '--orderings', 'fast'], 2, '"fast" is not known'],
@@ -250,7 +252,7 @@ describe('usage', () => {
         for (const [call] of examples) {
           expect(help.out).toContain(call);
           // every example is a call that the parser takes
-          expect(parseCall(call.split(' '), commands).command.name).toBe(name);
+          expect(() => parseCall(call.split(' '), commands)).not.toThrow();
         }
       }
     }
