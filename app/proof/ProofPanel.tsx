@@ -1,19 +1,22 @@
 import { useState } from 'react';
 import { asText, percent } from '../figures/format.ts';
 import { Term } from '../help/Term.tsx';
-import { startProof, stopProof, sweepThreshold } from '../state/proofs.ts';
+import { startProof, stopProof, usualWish } from '../state/proofs.ts';
 import type { Sheet } from '../state/sheets.ts';
 import type { ProofState, ShownProof, Trial } from '../state/trial.ts';
+import { resultOf } from '../state/vault.ts';
 import { pointTo } from '../state/view.ts';
 import { sayChoice } from '../trials/explain.ts';
 import { whyNoProof } from '../workers/rules.ts';
 import { Accuracy } from './Accuracy.tsx';
 import { Against } from './Against.tsx';
+import { EffectTable } from './Effect.tsx';
+import { HowToSolve } from './HowToSolve.tsx';
 import { Refinement } from './Refinement.tsx';
+import { Schur } from './Schur.tsx';
+import { SecondMatrix } from './SecondMatrix.tsx';
+import { Sweep } from './Sweep.tsx';
 import { VerdictMark } from './Verdict.tsx';
-
-const usualRefine = 5;
-const mostRefine = 20;
 
 /** Why a run could not be completed, with a way to the row it names. */
 function Failed({ failure }: { failure: NonNullable<ProofState['failure']> }) {
@@ -68,11 +71,11 @@ function Shown({ proof }: { proof: ShownProof }) {
 
 /** Proof of one trial. */
 function ProofOf({ sheet, trial }: { sheet: Sheet; trial: Trial }) {
-  const [refine, setRefine] = useState(usualRefine);
+  const [wish, setWish] = useState(usualWish);
   const { state, fraction, phase, failure, proof } = trial.proof;
   const why = sheet.facts === null ? null : whyNoProof(sheet.facts, trial.choice);
+  const effect = resultOf(trial.id)?.plan.effect ?? null;
   const busy = state === 'waiting' || state === 'running';
-  const pivots = trial.choice.factorization !== 'cholesky';
   return (
     <section className="proof" aria-label="Proof">
       <p>
@@ -96,37 +99,29 @@ function ProofOf({ sheet, trial }: { sheet: Sheet; trial: Trial }) {
             type="button"
             className="lead"
             disabled={why !== null || trial.state !== 'done'}
-            onClick={() => startProof(sheet.id, trial.id, refine)}
+            onClick={() => startProof(sheet.id, trial.id, wish)}
           >
             {proof === null ? 'Run the proof' : 'Run it again'}
           </button>
-          <label className="small">
-            at most{' '}
-            <input
-              type="number"
-              min={0}
-              max={mostRefine}
-              step={1}
-              value={refine}
-              onChange={(event) => setRefine(Math.max(0, Math.min(mostRefine, Math.trunc(Number(event.target.value)))))}
-            />{' '}
-            refinement steps
-          </label>
-          {pivots ? (
-            <button
-              type="button"
-              disabled={why !== null}
-              onClick={() => sweepThreshold(sheet, trial.choice, refine)}
-              title="Adds a trial for each threshold and proves it"
-            >
-              Sweep the threshold
-            </button>
-          ) : null}
         </div>
       )}
+      <HowToSolve
+        wish={wish}
+        change={(part) => setWish((w) => ({ ...w, ...part }))}
+        given={sheet.summary?.rightHandSides ?? 0}
+        fronts={trial.choice.factorization !== 'column-lu'}
+      />
       {state === 'stopped' ? <p>Stopped.</p> : null}
       {failure === null || state === 'stopped' ? null : <Failed failure={failure} />}
+      {effect === null ? null : <EffectTable effect={effect} />}
       {proof === null ? null : <Shown proof={proof} />}
+      {why !== null || trial.state !== 'done' ? null : (
+        <>
+          <Sweep sheet={sheet} trial={trial} wish={wish} />
+          <SecondMatrix sheet={sheet} trial={trial} wish={wish} />
+          <Schur sheet={sheet} trial={trial} wish={wish} />
+        </>
+      )}
     </section>
   );
 }

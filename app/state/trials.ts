@@ -2,7 +2,7 @@ import type { Choice } from '../../engine/trial/choice.ts';
 import { advisedFactorization, defaultChoice, suitableOrderings } from '../workers/rules.ts';
 import { startForecast } from './forecasts.ts';
 import { notify, say } from './notices.ts';
-import { changeSheet, type Sheet, type SheetId, sheetById, sheetsStore } from './sheets.ts';
+import { changeSheet, type Sheet, type SheetId, sheetById } from './sheets.ts';
 import { follow, stopTask } from './tasks.ts';
 import { choiceKey, letterOf, noProof, type Trial, type TrialId } from './trial.ts';
 import { keepResult, pool } from './vault.ts';
@@ -78,22 +78,6 @@ export function addTrials(id: SheetId, plans: readonly TrialPlan[], undoable = t
   }));
   for (const trial of added) startTrial(id, trial.id);
   return added.length;
-}
-
-/** Calls back once the trial of that choice is finished, at once if it is; never if it fails or goes away. */
-export function whenDone(id: SheetId, choice: Choice, then: (trialId: TrialId) => void): void {
-  const key = choiceKey(choice, []);
-  const look = (): 'wait' | 'over' => {
-    const trial = sheetById(id)?.trials.find((t) => choiceKey(t.choice, t.heldLast) === key);
-    if (trial === undefined || trial.state === 'failed' || trial.state === 'stopped') return 'over';
-    if (trial.state !== 'done') return 'wait';
-    then(trial.id);
-    return 'over';
-  };
-  if (look() === 'over') return;
-  const leave = sheetsStore.subscribe(() => {
-    if (look() === 'over') leave();
-  });
 }
 
 /** Runs a trial, or runs it again. */

@@ -5,7 +5,7 @@ import { forecast } from './forecastJobs.ts';
 import { convention, permutation } from './handoverJobs.ts';
 import { layMap, map, spot, whyFill } from './mapJobs.ts';
 import { combine, difference, matrixFile } from './matrixJobs.ts';
-import { prove } from './proofJobs.ts';
+import { prove, reuse, schur, sweep } from './proofJobs.ts';
 import type { Answer, Ask, Early, Operation } from './protocol.ts';
 import { read } from './readJobs.ts';
 import type { Shelf } from './shelf.ts';
@@ -45,6 +45,9 @@ export const jobs: { readonly [K in Operation]: Job<K> } = {
   trial,
   forecast,
   prove,
+  sweep,
+  reuse,
+  schur,
   permutation,
   convention,
 };

@@ -6,10 +6,10 @@ import type { MatrixDifference } from '../../engine/matrix/difference.ts';
 import type { NewToOld } from '../../engine/matrix/permutation.ts';
 import type { Survey } from '../../engine/survey/survey.ts';
 import type { Choice } from '../../engine/trial/choice.ts';
-import type { Proof } from '../../engine/trial/proof.ts';
 import type { TrialResult } from '../../engine/trial/result.ts';
 import type { MatrixFacts } from '../../engine/trial/rules.ts';
 import type { MapOperations } from './mapOperations.ts';
+import type { ProofOperations } from './proofOperations.ts';
 import type { MatrixKey } from './protocol.ts';
 import type { Stock } from './stock.ts';
 import type { ImportSummary } from './summary.ts';
@@ -80,7 +80,7 @@ export interface SummandAsk {
 }
 
 /** Every operation of a worker: what it asks, what it answers, what it can say early. */
-export interface Operations extends MapOperations, TreeOperations {
+export interface Operations extends MapOperations, TreeOperations, ProofOperations {
   /** the worked examples, drawn from their smallest size */
   plates: { ask: { cells: number }; answer: readonly Plate[]; early: Plate };
   /** a matrix from a file, with the repairs that were chosen */
@@ -121,12 +121,6 @@ export interface Operations extends MapOperations, TreeOperations {
   survey: { ask: { key: MatrixKey }; answer: Survey; early: NamedFact };
   /** one trial: ordering, analysis, forecast */
   trial: { ask: { key: MatrixKey; choice: Choice; heldLast: Int32Array }; answer: TrialAnswer; early: never };
-  /** the numeric run of a finished trial; refused if its forecast passes the memory limit (bytes) */
-  prove: {
-    ask: { key: MatrixKey; result: TrialResult; heldLast: Int32Array; refine: number; memoryLimit: number };
-    answer: Proof;
-    early: never;
-  };
   /** a permutation file */
   permutation: { ask: { order: NewToOld; format: PermutationFormat }; answer: Uint8Array<ArrayBuffer>; early: never };
   /** a convention in words, with the first places of an order as its example */
