@@ -1,13 +1,11 @@
 import { expect, test } from 'vitest';
 import { assemble } from '../../engine/matrix/assemble.ts';
-import { checkPattern, checkPermutation } from '../../engine/matrix/check.ts';
+import { checkPermutation } from '../../engine/matrix/check.ts';
 import type { SparseMatrix } from '../../engine/matrix/pattern.ts';
 import { Random } from '../../engine/matrix/random.ts';
-import { compressPairs } from '../../engine/prepare/compressPairs.ts';
 import { applyScaling } from '../../engine/prepare/scaling.ts';
 import { symmetricMatching } from '../../engine/prepare/symmetricMatching.ts';
-import { drawn } from '../support/picture.ts';
-import { randomMatrix, randomOrder } from '../support/random.ts';
+import { randomMatrix } from '../support/random.ts';
 import { readReference } from '../support/reference.ts';
 
 /** [H Bᵀ; B 0] with m constraints on n unknowns, values over many orders. */
@@ -122,40 +120,4 @@ test('an open saddle-like matrix without any diagonal (virginia_queen), and refu
   expectInvolution(s.partner);
   expect(s.size).toBe(131);
   expect(() => symmetricMatching(readReference('arc130'))).toThrow(/symmetric/);
-});
-
-test('compressed graph by hand, and expansion of an order', () => {
-  const a = drawn(`
-    x.x.
-    .x.x
-    x.x.
-    .x.x
-  `);
-  const c = compressPairs(a, Int32Array.of(0, 3, 2, 1));
-  checkPattern(c.pattern);
-  expect(Array.from(c.vertexOf)).toEqual([0, 1, 2, 1]);
-  expect(Array.from(c.pattern.columnPointer)).toEqual([0, 2, 3, 5]);
-  expect(Array.from(c.pattern.rowIndex)).toEqual([0, 2, 1, 0, 2]);
-  const order = randomOrder(3, 1);
-  order.set([2, 1, 0]);
-  expect(Array.from(c.expand(order))).toEqual([2, 1, 3, 0]);
-});
-
-test('compression joins exactly what the unknowns join, seed 630', () => {
-  const a = saddlePoint(20, 8, 630);
-  const s = symmetricMatching(a);
-  const c = compressPairs(a, s.partner);
-  const expected = new Set<string>();
-  for (let j = 0; j < a.columns; j++) {
-    expected.add(`${c.vertexOf[j]},${c.vertexOf[j]}`);
-    for (let p = a.columnPointer[j]; p < a.columnPointer[j + 1]; p++)
-      expected.add(`${c.vertexOf[a.rowIndex[p]]},${c.vertexOf[j]}`);
-  }
-  const found = new Set<string>();
-  for (let j = 0; j < c.pattern.columns; j++) {
-    for (let p = c.pattern.columnPointer[j]; p < c.pattern.columnPointer[j + 1]; p++)
-      found.add(`${c.pattern.rowIndex[p]},${j}`);
-  }
-  expect(found).toEqual(expected);
-  checkPermutation(c.expand(randomOrder(c.pattern.columns, 2)), a.columns);
 });
