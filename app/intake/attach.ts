@@ -16,11 +16,15 @@ const roles: readonly { readonly id: CompanionRole; readonly text: string }[] = 
 ];
 
 /** What a file beside a matrix is to be used as: what it looks like, or what the user says. */
-export async function roleOf(piece: Piece, matrix: string): Promise<CompanionRole | null> {
+export async function roleOf(piece: Piece, matrix: string): Promise<CompanionRole | 'matrix' | null> {
   const found = roles.find((r) => r.id === piece.role);
   if (found !== undefined) return found.id;
   const looks = piece.what === '' ? '' : ` and looks like ${piece.what}`;
-  const answer = await ask(`What is ${piece.name}?`, `It came beside ${matrix}${looks}. It can be used as:`, roles);
+  const answer = await ask(`What is ${piece.name}?`, `It came beside ${matrix}${looks}. It can be used as:`, [
+    ...roles,
+    { id: 'matrix', text: 'a matrix of its own' },
+  ]);
+  if (answer === 'matrix') return answer;
   return roles.find((r) => r.id === answer)?.id ?? null;
 }
 

@@ -13,16 +13,19 @@ export interface Piece {
   readonly name: string;
   readonly role: 'matrix' | CompanionRole | 'unknown';
   readonly what: string;
+  /** a banner or a title says that it is a matrix; other tables of numbers only look like one */
+  readonly certain: boolean;
 }
 
 type Seen = Pick<Inspected, 'role' | 'what'> & { readonly kind: Inspected['kind'] | null };
 
 function pieceOf(file: File, member: string | null, { kind, role, what }: Seen): Piece {
   const name = (member ?? file.name).split('/').at(-1) ?? file.name;
-  const base = { file, member, name, what };
   const certain = kind === 'matrix-market' || kind === 'harwell-boeing' || kind === 'rutherford-boeing';
+  const base = { file, member, name, what, certain };
   // tables of numbers have no banner: the name may say that they are places of nodes
-  if (!(certain && role === 'matrix') && /coord|xyz|nodes|mesh/i.test(name)) return { ...base, role: 'coordinates' };
+  if (!(certain && role === 'matrix') && /coord|xyz?\b|_xyz?\.|nodes|mesh/i.test(name))
+    return { ...base, role: 'coordinates' };
   return { ...base, role: role === 'archive' ? 'unknown' : role };
 }
 
@@ -34,7 +37,8 @@ export async function piecesOf(files: readonly File[]): Promise<readonly Piece[]
     const seen = await reply;
     if (!seen.ok) {
       // the reader says what is wrong with it, with place and reason
-      if (seen.failure.kind !== 'stopped') out.push({ file, member: null, name: file.name, role: 'matrix', what: '' });
+      if (seen.failure.kind !== 'stopped')
+        out.push({ file, member: null, name: file.name, role: 'matrix', what: '', certain: true });
       continue;
     }
     const { members } = seen.value;

@@ -33,7 +33,9 @@ export async function receive(files: readonly File[]): Promise<void> {
     return;
   }
   const pieces = await piecesOf(files);
-  const matrices = pieces.filter(({ role }) => role === 'matrix');
+  // a table without a banner beside a matrix may be a matrix, or places of nodes, or loads: the user says
+  const hasMatrix = host !== null || pieces.some((p) => p.role === 'matrix' && p.certain);
+  const matrices = pieces.filter(({ role, certain }) => role === 'matrix' && (certain || !hasMatrix));
   const companions = pieces.filter((piece) => !matrices.includes(piece));
   const laidOut = matrices.map(({ file, member }) => layOutFile(file, member));
   if (companions.length === 0) return;
@@ -47,7 +49,8 @@ export async function receive(files: readonly File[]): Promise<void> {
     const id = await hostOf(piece, hosts);
     if (id === null || !(await whenReady(id))) continue;
     const use = await roleOf(piece, sheetById(id)?.name ?? 'the matrix');
-    if (use !== null) await attach(id, piece, use);
+    if (use === 'matrix') layOutFile(piece.file, piece.member);
+    else if (use !== null) await attach(id, piece, use);
   }
 }
 
