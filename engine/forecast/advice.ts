@@ -131,36 +131,34 @@ function cautionsOf(best: AdviceTrial, target: Target): string[] {
   return out;
 }
 
-/** The changes that would help, each with the trial that needs least memory then; the first that fits is the nearest. */
+/** The changes that would help, each with the fastest trial that fits then; the first of them is the nearest. */
 function nothingFits(q: AdviceQuestion, why: string): Advice {
-  const { trials, target } = q;
-  const least = (value: (t: AdviceTrial) => number | null): { trial: AdviceTrial; bytes: number } | null => {
-    let best: { trial: AdviceTrial; bytes: number } | null = null;
-    for (const trial of trials) {
-      const bytes = value(trial);
-      if (bytes !== null && (best === null || bytes < best.bytes)) best = { trial, bytes };
-    }
-    return best;
-  };
-  const smallest = least((t) => t.peak.bytes);
-  if (smallest === null) throw new Error('no trials');
-  const single = least((t) => t.peak.inSingle);
-  const out = least((t) => t.peak.writtenOut);
+  const { trials, target, workload } = q;
   const limit = target.memoryBytes;
+  const seconds = (t: AdviceTrial): number => workloadSeconds(t.cost, workload);
+  const fastest = (bytesOf: (t: AdviceTrial) => number | null): { name: string; bytes: number } | null => {
+    let best: AdviceTrial | null = null;
+    for (const t of trials) {
+      const bytes = bytesOf(t);
+      if (bytes !== null && bytes <= limit && (best === null || seconds(t) < seconds(best))) best = t;
+    }
+    return best === null ? null : { name: best.name, bytes: bytesOf(best) ?? 0 };
+  };
+  const smallest = trials.reduce((a, b) => (b.peak.bytes < a.peak.bytes ? b : a));
+  const single = fastest((t) => t.peak.inSingle);
+  const out = fastest((t) => t.peak.writtenOut);
   const changes = [
-    single !== null && single.bytes <= limit
-      ? `in single precision, refined in double, ${single.trial.name} would fit with ${inUnit(single.bytes)}`
-      : null,
-    out !== null && out.bytes <= limit
-      ? `with its factors written out as they are made, ${out.trial.name} would need ${inUnit(out.bytes)}`
-      : null,
-    `${smallest.trial.name} would fit a machine with ${inUnit(smallest.bytes)}`,
+    single === null
+      ? null
+      : `in single precision, refined in double, ${single.name} would fit with ${inUnit(single.bytes)}`,
+    out === null ? null : `with its factors written out as they are made, ${out.name} would need ${inUnit(out.bytes)}`,
+    `${smallest.name} would fit a machine with ${inUnit(smallest.peak.bytes)}`,
   ].filter((c) => c !== null);
   return {
-    sentence: `Nothing fits ${inUnit(limit)}: the smallest, ${smallest.trial.name}, needs ${inUnit(smallest.bytes)}; ${changes[0]}.`,
+    sentence: `Nothing fits ${inUnit(limit)}: the smallest, ${smallest.name}, needs ${inUnit(smallest.peak.bytes)}; ${changes[0]}.`,
     best: null,
     reasons: [why, ...changes.map((c) => `${c[0].toUpperCase()}${c.slice(1)}.`)],
-    cautions: [...q.doubts, ...cautionsOf(smallest.trial, target)],
+    cautions: [...q.doubts, ...cautionsOf(smallest, target)],
     change: changes[0],
   };
 }

@@ -2,9 +2,9 @@ import { type Advice, type AdviceTrial, adviseOn } from '../forecast/advice.ts';
 import { trialCost } from '../forecast/cost.ts';
 import type { TrialForecast } from '../forecast/forecast.ts';
 import type { Target, Workload } from '../forecast/target.ts';
-import type { Choice, FactorizationName } from './choice.ts';
+import { type Choice, type FactorizationName, factorizationNames } from './choice.ts';
 import type { TrialCounts, TrialResult } from './result.ts';
-import { advisedFactorization, type MatrixFacts, nameOf } from './rules.ts';
+import { advisedFactorization, defaultChoice, type MatrixFacts, nameOf, whyNoProof } from './rules.ts';
 
 /** A finished trial with its forecast, as far as advice needs it; plain data. */
 export interface AdvisedTrial {
@@ -36,6 +36,24 @@ export function doubtsOf(facts: MatrixFacts, factorization: FactorizationName): 
   return out;
 }
 
+/** Which factorizations a numeric run could take on these values, and why the others could not. */
+export function possibleFactorizations(facts: MatrixFacts): readonly string[] {
+  const possible: string[] = [];
+  const not: string[] = [];
+  for (const name of factorizationNames) {
+    const why = whyNoProof(facts, defaultChoice(name, 'natural'));
+    if (why === null) possible.push(nameOf(name));
+    else not.push(why);
+  }
+  const out: string[] = possible.length === 0 ? [] : [`A run could factorize it by ${listed(possible)}.`];
+  // one sentence often stands for several factorizations
+  return [...out, ...new Set(not)];
+}
+
+function listed(words: readonly string[]): string {
+  return words.length < 2 ? words.join('') : `${words.slice(0, -1).join(', ')} or ${words[words.length - 1]}`;
+}
+
 /** Advice over finished trials of one matrix, for a target and a workload. Trials without a forecast are left out. */
 export function adviceFor(
   facts: MatrixFacts,
@@ -59,7 +77,7 @@ export function adviceFor(
       },
     ];
   });
-  return adviseOn({
+  const advice = adviseOn({
     factorization: nameOf(factorization),
     reason:
       advised.factorization === factorization
@@ -70,4 +88,6 @@ export function adviceFor(
     target,
     workload,
   });
+  const [first, ...rest] = advice.reasons;
+  return { ...advice, reasons: [first, ...possibleFactorizations(facts), ...rest] };
 }
