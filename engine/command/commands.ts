@@ -190,6 +190,39 @@ export const commands: readonly CommandRule[] = [
     examples: [['calibrate', 'prints the options that "compare" and "growth" take for this machine']],
   },
   {
+    name: 'handover',
+    help: 'writes every file of a chosen trial: order, matrix, structure, factors, configuration sheet, recipe, script, report',
+    files: [1, 1],
+    options: {
+      ordering,
+      orderings: {
+        kind: 'list',
+        words: orderingNames,
+        value: 'a,b,c',
+        help: 'orderings to compare in table and report; default the one handed over beside the natural one, or all that suit',
+      },
+      out: { kind: 'text', value: 'FOLDER', help: 'folder to write to, made where it is missing' },
+      prove: { kind: 'flag', help: 'runs the factorization first, so that sheet and report tell what it showed' },
+      'factor-limit': {
+        kind: 'bytes',
+        value: 'BYTES',
+        help: 'memory that writing the factors may take, else they are refused with the figure; default 1GiB',
+      },
+      'memory-limit': { kind: 'bytes', value: 'BYTES', help: 'memory of the numeric run; default 6GiB' },
+      ...trialOptions,
+      ...targetOptions,
+      ...workloadOptions,
+      json,
+    },
+    examples: [
+      ['handover bridge.mtx --out bridge-files', 'compares the orderings that suit and hands over the advised one'],
+      [
+        'handover bridge.mtx --ordering nested-dissection --prove --memory 64GiB --out bridge-files',
+        'one ordering, with its proof, for a machine of 64 GiB',
+      ],
+    ],
+  },
+  {
     name: 'replay',
     help: 'runs a recipe again on its matrix: the same numbers, or which ones differ (status 4)',
     files: [1, 1],

@@ -3,7 +3,6 @@ import { Fault } from '../matrix/fault.ts';
 import type { SparseMatrix } from '../matrix/pattern.ts';
 import type { NewToOld } from '../matrix/permutation.ts';
 import type { Progress } from '../matrix/progress.ts';
-import type { ColumnFactor } from '../numeric/column/columnFactor.ts';
 import { exportFactors } from '../numeric/column/export.ts';
 import { extractFactors } from '../numeric/fronts/extract.ts';
 import { FrontFactor } from '../numeric/fronts/frontFactor.ts';
@@ -38,13 +37,6 @@ export function factorsNeed(trial: TrialResult): number {
 export function whyNoFactors(context: TrialContext, trial: TrialResult, limit: number): string | null {
   const why = whyNoProof(context.facts, trial.choice);
   if (why !== null) return why;
-  if (
-    context.input.heldLast !== null &&
-    trial.choice.factorization !== 'column-lu' &&
-    trial.counts.factorEntries === null
-  ) {
-    return 'The counts of this trial are not defined.';
-  }
   const need = factorsNeed(trial);
   if (need <= limit) return null;
   const entries = trial.counts.factorEntries ?? 0;
@@ -65,11 +57,11 @@ export function handedFactors(
 ): HandedFactors {
   const why = whyNoFactors(context, trial, limit);
   if (why !== null) throw new Fault('memory', 'factors-too-large', why);
-  const solver = factorizeTrial(context, trial, { memoryLimit }, progress);
+  const { solver } = factorizeTrial(context, trial, { memoryLimit }, progress);
   if (solver instanceof FrontFactor) {
     return { ...extractFactors(solver.factors), offDiagonal: null };
   }
-  const { factors } = solver as ColumnFactor;
+  const { factors } = solver;
   const { lower, upper, offDiagonal } = exportFactors(factors);
   return {
     rowOrder: factors.rowOrder,

@@ -284,7 +284,10 @@ function cautionsFor({ context, trial, forecast, proof }: SheetQuestion): readon
     out.push(...doubtsOf(context.facts, choice.factorization));
     out.push('No numeric run was made: accuracy is not known.');
   } else {
-    out.push(...proof.card.reasons.map((r) => `Proof, ${proof.card.verdict}: ${r}`), ...proof.card.cautions);
+    out.push(
+      ...proof.card.reasons.map((r) => `Proof, ${proof.card.verdict}: ${r}`),
+      ...proof.card.cautions.filter((c) => !c.startsWith('A small residual')),
+    );
   }
   const full = forecast?.limits.find((l) => !l.passed && l.question.includes('target'));
   if (full !== undefined) out.push(`It does not fit the target. ${full.sentence}`);
