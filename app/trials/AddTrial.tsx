@@ -15,6 +15,7 @@ import type { Sheet } from '../state/sheets.ts';
 import { choiceKey } from '../state/trial.ts';
 import { addTrials } from '../state/trials.ts';
 import { advisedFactorization, defaultChoice, whyNoForecast } from '../workers/rules.ts';
+import { Details } from './Details.tsx';
 import { factorizations, matchings, orderings, pivotings, type Said, scalings } from './explain.ts';
 import { parseUnknowns } from './unknowns.ts';
 
@@ -202,11 +203,15 @@ export function AddTrial({ ref, sheet }: { ref: RefObject<HTMLDialogElement | nu
               />
               <span>
                 block triangular form first
-                <span className="small soft"> Only the diagonal blocks are factorized.</span>
+                <span className="small soft">
+                  {' '}
+                  Only the diagonal blocks are factorized; of a symmetric matrix, component after component.
+                </span>
               </span>
             </label>
           </div>
         </fieldset>
+        <Details plan={plan} change={change} portfolio={tried.includes('best-of')} />
         <div className="dialog-foot">
           <p className="small soft" aria-live="polite">
             {ready ? '' : tried.length === 0 ? 'Choose at least one ordering.' : (reasons.get(tried[0]) ?? '')}

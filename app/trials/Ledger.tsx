@@ -31,11 +31,17 @@ export function Ledger({ sheet }: { sheet: Sheet }) {
   const figures = useFigures(sheet);
   const trials = useMemo(() => sortTrials(sheet.trials, figures, order), [sheet.trials, figures, order]);
   const ranges = useMemo(() => columns.map((c) => rangeOf([...figures.values()], c, limit)), [figures, columns, limit]);
+  const { facts, trials: all } = sheet;
+  const { target, workload } = settings;
+  const advice = useMemo(
+    () => (facts === null ? null : adviceOn(facts, all, { target, workload })),
+    [facts, all, target, workload],
+  );
   const keys = useGridKeys(trials.length, columns.length);
   return (
     <div className="ledger">
       <LedgerTools sheet={sheet} columns={columns} trials={trials} figures={figures} />
-      {sheet.facts === null ? null : <AdviceLine advice={adviceOn(sheet.facts, sheet.trials, figures, settings)} />}
+      {advice === null ? null : <AdviceLine advice={advice} />}
       <div className="ledger-scroll">
         {/* biome-ignore lint/a11y/noNoninteractiveElementToInteractiveRole: a table whose cells take the focus is a grid */}
         <table role="grid" aria-label="Trials" className="ledger-table" onKeyDown={keys.onKeyDown}>

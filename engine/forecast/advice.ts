@@ -41,9 +41,10 @@ export interface Advice {
 
 /** Seconds as people say them. */
 function duration(seconds: number): string {
-  if (seconds < 1e-3) return `${(seconds * 1e6).toPrecision(2)} µs`;
-  if (seconds < 1) return `${(seconds * 1e3).toPrecision(2)} ms`;
-  if (seconds < 120) return `${seconds.toPrecision(2)} s`;
+  if (seconds < 1e-3) return `${Number((seconds * 1e6).toPrecision(2))} µs`;
+  // through a number: 330 and not 3.3e+2
+  if (seconds < 1) return `${Number((seconds * 1e3).toPrecision(2))} ms`;
+  if (seconds < 120) return `${Number(seconds.toPrecision(2))} s`;
   return seconds < 7200 ? `${(seconds / 60).toPrecision(2)} min` : `${(seconds / 3600).toPrecision(2)} h`;
 }
 

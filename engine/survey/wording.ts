@@ -38,7 +38,7 @@ export function figure(x: number): string {
 export function percent(share: number): string {
   if (share === 0 || share === 1) return `${100 * share} %`;
   if (share > 0.9995) return 'more than 99.9 %';
-  return share < 0.0005 ? `${(100 * share).toExponential(1)} %` : `${Number((100 * share).toPrecision(3))} %`;
+  return share < 5e-7 ? `${(100 * share).toExponential(1)} %` : `${Number((100 * share).toPrecision(3))} %`;
 }
 
 /** Lines counted from 1: "row 5", "rows 5, 7 and 9", "rows 5, 7, 9 and 12 more" */

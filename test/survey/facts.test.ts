@@ -469,12 +469,13 @@ describe('words and numbers', () => {
       '1e6',
       '123000',
     ]);
-    expect([percent(0), percent(1), percent(0.99999), percent(0.125), percent(5e-6)]).toEqual([
+    expect([percent(0), percent(1), percent(0.99999), percent(0.125), percent(5e-6), percent(5e-8)]).toEqual([
       '0 %',
       '100 %',
       'more than 99.9 %',
       '12.5 %',
-      '5.0e-4 %',
+      '0.0005 %',
+      '5.0e-6 %',
     ]);
     expect(lines('row', [4], 1)).toBe('row 5');
     expect(lines('row', [4, 6, 8], 3)).toBe('rows 5, 7 and 9');

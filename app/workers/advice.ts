@@ -1,0 +1,2 @@
+/** Advice over finished trials: plain sentences from plain figures. */
+export { type AdvisedTrial, adviceFor } from '../../engine/trial/advice.ts';
