@@ -77,6 +77,10 @@ test('a table that may be several things is asked about; a permutation onto an o
     },
   ]);
   await page
+    .getByRole('dialog', { name: 'What is p.txt?' })
+    .getByRole('button', { name: /a permutation/ })
+    .click();
+  await page
     .getByRole('dialog', { name: 'How is p.txt to be read?' })
     .getByRole('button', { name: 'Use the right column' })
     .click();
