@@ -40,7 +40,7 @@ export function analyseGraph(
   // the walk for counts needs a postorder of the whole tree, held-last columns or not
   const fullPost = (options.heldLast ?? 0) > 0 ? postorder(tree) : post;
   progress(0.5, 'column counts');
-  const counts = columnCounts(graph, order, position, tree, fullPost);
+  const counts = columnCounts(graph, order, tree, fullPost);
   progress(0.95, 'totals');
   let effective = order;
   let parent = tree;

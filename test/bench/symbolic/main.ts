@@ -39,7 +39,7 @@ function count(graph: Graph, order: NewToOld, runs: number): { first: number; be
     const t = clock();
     const position = positionOf(order);
     const parent = eliminationTree(graph, order, position);
-    const counts = columnCounts(graph, order, position, parent, postorder(parent));
+    const counts = columnCounts(graph, order, parent, postorder(parent));
     const s = clock() - t;
     if (run === 0) first = s;
     best = Math.min(best, s);
