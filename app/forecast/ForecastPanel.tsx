@@ -5,6 +5,7 @@ import type { Sheet } from '../state/sheets.ts';
 import type { Trial } from '../state/trial.ts';
 import { sayChoice } from '../trials/explain.ts';
 import { Parallel } from './Parallel.tsx';
+import { Reconcile } from './Reconcile.tsx';
 
 /** One figure with its kind, or why there is none. */
 function Line({ head, figure, write }: { head: string; figure: Figure; write: (x: number) => Written }) {
@@ -27,7 +28,7 @@ function Line({ head, figure, write }: { head: string; figure: Figure; write: (x
 }
 
 function Shown({ forecast }: { forecast: TrialForecast }) {
-  const { limits, storage, time, parallel, delayed } = forecast;
+  const { limits, storage, operations, time, parallel, delayed } = forecast;
   return (
     <>
       <dl className="limits">
@@ -52,6 +53,17 @@ function Shown({ forecast }: { forecast: TrialForecast }) {
           <Line head="saved by overwriting A" figure={storage.overwriting} write={bytes} />
         </tbody>
       </table>
+      <h3>Operations</h3>
+      <table className="facts-table">
+        <tbody>
+          <Line head="factorization" figure={operations.factorization} write={count} />
+          {operations.executed === null ? null : (
+            <Line head="executed, with padding" figure={operations.executed} write={count} />
+          )}
+          <Line head="solve, one right-hand side" figure={operations.solve} write={count} />
+          <Line head="one refinement step" figure={operations.refinementStep} write={count} />
+        </tbody>
+      </table>
       <h3>Time on one core of your target</h3>
       <table className="facts-table">
         <tbody>
@@ -68,13 +80,16 @@ function Shown({ forecast }: { forecast: TrialForecast }) {
       )}
       {delayed === null || delayed.length === 0 ? null : (
         <>
-          <h3>If pivots are delayed</h3>
+          <h3>
+            If pivots are delayed <span className="kind">modelled</span>
+          </h3>
           <table className="facts-table against">
             <thead>
               <tr>
                 <th scope="col">share delayed</th>
                 <th scope="col">stored entries</th>
                 <th scope="col">operations</th>
+                <th scope="col">bytes</th>
               </tr>
             </thead>
             <tbody>
@@ -83,6 +98,7 @@ function Shown({ forecast }: { forecast: TrialForecast }) {
                   <th scope="row">{asText({ ...times(row.share * 100), unit: '%' })}</th>
                   <td className="figure">{asText(count(row.storedFactorEntries))}</td>
                   <td className="figure">{asText(count(row.operations))}</td>
+                  <td className="figure">{asText(bytes(row.bytes))}</td>
                 </tr>
               ))}
             </tbody>
@@ -97,12 +113,41 @@ function Shown({ forecast }: { forecast: TrialForecast }) {
 function Range({ trial }: { trial: Trial }) {
   const counts = trial.outcome?.counts;
   if (counts === undefined || counts.range === null) return null;
-  const [least, most] = counts.range.factorEntries;
+  const lines = [
+    ['factor entries', counts.expected?.factorEntries ?? counts.factorEntries, counts.range.factorEntries, count],
+    ['operations', counts.operations, counts.range.operations, count],
+    ['factor bytes', counts.factorBytes, counts.range.bytes, bytes],
+  ] as const;
   return (
-    <p>
-      Whatever pivots are taken, the factors hold between <span className="figure">{asText(count(least))}</span> and{' '}
-      <span className="figure">{asText(count(most))}</span> entries <span className="kind">bound</span>.
-    </p>
+    <>
+      <h3>Whatever pivots are taken</h3>
+      <table className="facts-table against">
+        <thead>
+          <tr>
+            <td />
+            <th scope="col">expected</th>
+            <th scope="col">at least</th>
+            <th scope="col">at most</th>
+          </tr>
+        </thead>
+        <tbody>
+          {lines.map(([head, expected, range, write]) => (
+            <tr key={head}>
+              <th scope="row">{head}</th>
+              {[expected, ...range].map((x, k) => (
+                // biome-ignore lint/suspicious/noArrayIndexKey: three columns in their order
+                <td key={k} className="figure" title={x === null ? '' : write(x).exact}>
+                  {x === null ? '–' : asText(write(x))}
+                </td>
+              ))}
+            </tr>
+          ))}
+        </tbody>
+      </table>
+      <p className="small soft">
+        Least and most are proven for every choice of pivots of this kind; expected is a model.
+      </p>
+    </>
   );
 }
 
@@ -130,6 +175,7 @@ export function ForecastPanel({ sheet }: { sheet: Sheet }) {
       ) : (
         <Shown forecast={trial.forecast} />
       )}
+      <Reconcile sheet={sheet} />
       <p className="caution-note small">
         <strong>Caution.</strong> A forecast is no guarantee once pivots are chosen by size. Seconds are modelled from
         the rates of your target; compare trials by them, and promise nothing.

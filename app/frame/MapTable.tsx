@@ -1,4 +1,5 @@
 import { useStore } from 'zustand';
+import { Growth } from '../forecast/Growth.tsx';
 import type { Pane } from '../maps/contract.ts';
 import { Maps } from '../maps/Maps.tsx';
 import type { Sheet } from '../state/sheets.ts';
@@ -13,6 +14,7 @@ const views: readonly { name: SheetView; label: string }[] = [
   { name: 'maps', label: 'Maps' },
   { name: 'tree', label: 'Tree' },
   { name: 'comparison', label: 'Comparison' },
+  { name: 'growth', label: 'Growth' },
 ];
 
 /** The maps that a sheet shows now: the original first, then the trials put on the sheet. */
@@ -47,6 +49,8 @@ export function MapTable({ sheet }: { sheet: Sheet }) {
     >
       {view === 'comparison' ? (
         <Comparison sheet={sheet} />
+      ) : view === 'growth' ? (
+        <Growth />
       ) : view === 'tree' ? (
         <TreeView sheet={sheet} />
       ) : (

@@ -4,7 +4,7 @@ import { createStore } from 'zustand/vanilla';
 export type PanelName = 'trials' | 'survey' | 'forecast' | 'import' | 'proof' | 'handover';
 
 /** What lies on the sheet. */
-export type SheetView = 'maps' | 'tree' | 'comparison';
+export type SheetView = 'maps' | 'tree' | 'comparison' | 'growth';
 
 /** Lines or entries that a fact, a pivot or a fault points to; the maps mark them and go there. */
 export interface Pointing {

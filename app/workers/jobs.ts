@@ -2,12 +2,23 @@ import type { Progress } from '../../engine/matrix/progress.ts';
 import { attach, inspect } from './attachJobs.ts';
 import { example, plates } from './exampleJobs.ts';
 import { forecast } from './forecastJobs.ts';
-import { convention, permutation } from './handoverJobs.ts';
+import {
+  convention,
+  handoverFile,
+  handoverList,
+  handoverPreview,
+  handoverZip,
+  heldAgainst,
+  makeRecipe,
+  matchRecipe,
+  permutation,
+} from './handoverJobs.ts';
 import { layMap, map, spot, whyFill } from './mapJobs.ts';
 import { combine, difference, matrixFile } from './matrixJobs.ts';
 import { prove, reuse, schur, sweep } from './proofJobs.ts';
 import type { Answer, Ask, Early, Operation } from './protocol.ts';
 import { read } from './readJobs.ts';
+import { reconcile } from './reconcileJobs.ts';
 import type { Shelf } from './shelf.ts';
 import { survey } from './surveyJobs.ts';
 import { front, tree } from './treeJobs.ts';
@@ -44,10 +55,18 @@ export const jobs: { readonly [K in Operation]: Job<K> } = {
   front,
   trial,
   forecast,
+  reconcile,
   prove,
   sweep,
   reuse,
   schur,
   permutation,
   convention,
+  handoverList,
+  handoverFile,
+  handoverPreview,
+  handoverZip,
+  makeRecipe,
+  matchRecipe,
+  heldAgainst,
 };

@@ -1,6 +1,7 @@
 import type { FileKind, Recognised } from '../../engine/exchange/recognise.ts';
 import type { Direction, PermutationFormat } from '../../engine/exchange/writePermutation.ts';
 import type { TrialForecast } from '../../engine/forecast/forecast.ts';
+import type { Explanation } from '../../engine/forecast/reconcile.ts';
 import type { Target } from '../../engine/forecast/target.ts';
 import type { MatrixDifference } from '../../engine/matrix/difference.ts';
 import type { NewToOld } from '../../engine/matrix/permutation.ts';
@@ -73,6 +74,12 @@ export interface Inspected extends Recognised {
     | null;
 }
 
+/** A figure that another solver reported. */
+export interface Reported {
+  readonly what: 'entries' | 'operations' | 'bytes';
+  readonly value: number;
+}
+
 /** One summand of a combination. */
 export interface SummandAsk {
   readonly key: MatrixKey;
@@ -127,6 +134,17 @@ export interface Operations extends MapOperations, TreeOperations, ProofOperatio
   convention: {
     ask: { order: NewToOld; direction: Direction; base: 0 | 1 };
     answer: { formula: string; example: readonly string[]; selfInverse: boolean };
+    early: never;
+  };
+  /** which convention of counting, on which trial, explains figures that another solver reported */
+  reconcile: {
+    ask: {
+      key: MatrixKey;
+      trials: readonly { name: string; result: TrialResult; heldLast: Int32Array }[];
+      target: Target;
+      reported: readonly Reported[];
+    };
+    answer: readonly (Reported & { explanations: readonly Explanation[] })[];
     early: never;
   };
   /** what a finished trial costs on a target (bytes a proof in this page may take); null where counts are missing */

@@ -1,12 +1,9 @@
-import { workOfFronts } from '../forecast/frontWork.ts';
 import { type Explanation, explainedWithin, type OwnCounts, reconcile } from '../forecast/reconcile.ts';
 import { Fault } from '../matrix/fault.ts';
 import type { OrderingName } from '../trial/choice.ts';
-import type { TrialContext } from '../trial/context.ts';
-import { forecastTrial, treeOf } from '../trial/forecast.ts';
-import type { TrialResult } from '../trial/result.ts';
+import { ownCountsOf } from '../trial/ownCounts.ts';
 import { suitableOrderings, whyNoForecast } from '../trial/rules.ts';
-import { arithmeticOf, runTrial } from '../trial/run.ts';
+import { runTrial } from '../trial/run.ts';
 import { targetOf } from './forecastOptions.ts';
 import { choiceOf, loadContext, matrixJson, matrixLine } from './load.ts';
 import { jsonText, type Output, tableText } from './output.ts';
@@ -35,7 +32,7 @@ export async function reconcileCommand(call: Call, out: Output): Promise<number>
     const choice = { ...base, ordering };
     const why = whyNoForecast(context.facts, choice);
     if (why !== null) throw new Fault('input', 'trial-impossible', `${loaded.name}: ${why}`, { file: loaded.name });
-    own.push(ownCounts(call, context, runTrial(context, choice)));
+    own.push(ownCountsOf(context, runTrial(context, choice), targetOf(call)));
   }
   const answers = reported.flatMap(([what, value]) =>
     value === null ? [] : [{ what, reported: value, explanations: reconcile(what, value, own) }],
@@ -52,39 +49,6 @@ export async function reconcileCommand(call: Call, out: Output): Promise<number>
     out.line(answerText(what, value, explanations));
   }
   return 0;
-}
-
-function ownCounts(call: Call, context: TrialContext, trial: TrialResult): OwnCounts {
-  const { counts, choice } = trial;
-  const target = targetOf(call);
-  const forecast = forecastTrial(context, trial, target, Number.POSITIVE_INFINITY);
-  if (forecast === null || counts.lowerEntries === null || counts.operations === null) {
-    throw new Fault('input', 'reconcile-undefined', 'Figures can be reconciled for square matrices only.');
-  }
-  const kind = choice.factorization === 'column-lu' ? 'lu' : choice.factorization;
-  const tree = treeOf(context, trial);
-  const padded =
-    tree === null ? null : workOfFronts(kind, tree, arithmeticOf(context, kind)).reduce((a, b) => a + b, 0);
-  const { storage } = forecast;
-  const layouts = [
-    ['supernodal panels', storage.panels.value],
-    ['fronts with their stack', storage.multifrontal.value],
-    ['stack of contribution blocks', storage.stack.value],
-    ['compressed columns with their pointers', storage.compressedColumns.value],
-    ['envelope (skyline)', storage.envelope.value],
-  ] as const;
-  return {
-    size: context.facts.columns,
-    name: choice.ordering,
-    kind,
-    lowerEntries: counts.lowerEntries,
-    upperEntries: counts.upperEntries,
-    storedFactorEntries: tree?.storedFactorEntries ?? null,
-    operations: counts.operations,
-    paddedOperations: padded,
-    complex: context.facts.complex,
-    layouts: layouts.flatMap(([word, value]) => (value === null ? [] : [[word, value] as const])),
-  };
 }
 
 function answerText(what: string, reported: number, explanations: readonly Explanation[]): string {
