@@ -71,6 +71,7 @@ function rowMergeForest(
       let r = f;
       while (r !== k && ancestor[r] >= 0) r = ancestor[r];
       if (r === k) {
+        shorten(ancestor, f, k, k);
         joined[i] = k;
         continue;
       }
