@@ -1,5 +1,6 @@
 import type { Sheet } from '../state/sheets.ts';
 import { sayChoice } from '../trials/explain.ts';
+import { Files } from './Files.tsx';
 import { PermutationExport } from './PermutationExport.tsx';
 
 /** What the engineer leaves with: files that carry the chosen trial into another solver and to colleagues. */
@@ -15,7 +16,20 @@ export function HandoverPanel({ sheet }: { sheet: Sheet }) {
       <p>
         <span className="stamp stamp-still">{trial.letter}</span> {sayChoice(trial.choice)}
       </p>
-      <PermutationExport key={trial.id} sheet={sheet} trial={trial} />
+      <ul className="handover-cautions small" aria-label="Cautions">
+        {trial.choice.pivoting === 'threshold' ? (
+          <li>
+            Pivoting can add entries and memory: the forecast is no guarantee, and the sheet adds a margin for it.
+          </li>
+        ) : null}
+        {trial.proof.proof === null ? <li>Nothing is proven yet: run the proof before relying on it.</li> : null}
+        <li>
+          A small residual does not show that the model is right. Where people rely on the result, local codes and
+          licensed practice decide.
+        </li>
+      </ul>
+      <Files key={trial.id} sheet={sheet} trial={trial} />
+      <PermutationExport key={`order ${trial.id}`} sheet={sheet} trial={trial} />
     </section>
   );
 }

@@ -1,3 +1,4 @@
+import { openRecipe, recipesAmong } from '../handover/openRecipe.ts';
 import { ask } from '../state/questions.ts';
 import {
   changeSheet,
@@ -16,7 +17,7 @@ import { type Piece, piecesOf } from './pieces.ts';
 import { settle } from './settle.ts';
 
 /** Where the matrix of a sheet came from, so that it can be read again in another way. */
-interface Origin {
+export interface Origin {
   readonly file: File;
   /** ways of reading that were chosen, in order */
   readonly repairs: readonly string[];
@@ -24,8 +25,18 @@ interface Origin {
 
 const origins = new Map<SheetId, Origin>();
 
-/** Takes in files that were dropped or chosen together: matrices are laid out, everything else is put beside its matrix. */
-export async function receive(files: readonly File[]): Promise<void> {
+/** Takes in files that were dropped or chosen together: matrices are laid out, recipes run on them, everything else is put beside. */
+export async function receive(dropped: readonly File[]): Promise<void> {
+  const { recipes, rest } = await recipesAmong(dropped);
+  await takeIn(rest);
+  for (const file of recipes) {
+    const front = currentSheet(sheetsStore.getState());
+    const there = front !== null && (await whenReady(front.id));
+    await openRecipe(there ? front.id : null, file, there ? (originOf(front.id)?.file ?? null) : null);
+  }
+}
+
+async function takeIn(files: readonly File[]): Promise<void> {
   if (files.length === 0) return;
   const host = currentReady();
   if (files.length === 1 && host === null && !(await isPacked(files[0]))) {
@@ -117,6 +128,11 @@ export function readAgain(id: SheetId, repair?: string): void {
 /** Whether the sheet came from a file that can be read again. */
 export function canReadAgain(id: SheetId): boolean {
   return origins.has(id);
+}
+
+/** The file of a sheet and how it was read; null where it came from none. */
+export function originOf(id: SheetId): Origin | null {
+  return origins.get(id) ?? null;
 }
 
 /** Lets go of the file of a sheet. */

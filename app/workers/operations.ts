@@ -9,6 +9,7 @@ import type { Survey } from '../../engine/survey/survey.ts';
 import type { Choice } from '../../engine/trial/choice.ts';
 import type { TrialResult } from '../../engine/trial/result.ts';
 import type { MatrixFacts } from '../../engine/trial/rules.ts';
+import type { HandoverOperations } from './handoverOperations.ts';
 import type { MapOperations } from './mapOperations.ts';
 import type { ProofOperations } from './proofOperations.ts';
 import type { MatrixKey } from './protocol.ts';
@@ -87,7 +88,7 @@ export interface SummandAsk {
 }
 
 /** Every operation of a worker: what it asks, what it answers, what it can say early. */
-export interface Operations extends MapOperations, TreeOperations, ProofOperations {
+export interface Operations extends MapOperations, TreeOperations, ProofOperations, HandoverOperations {
   /** the worked examples, drawn from their smallest size */
   plates: { ask: { cells: number }; answer: readonly Plate[]; early: Plate };
   /** a matrix from a file, with the repairs that were chosen */

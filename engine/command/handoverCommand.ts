@@ -65,7 +65,7 @@ export async function handoverCommand(call: Call, out: Output): Promise<number> 
       figures: tableFigures,
     },
     recipe: await recipeOfTrials(call, loaded, named, chosen.name, target, workload),
-    whyNoRecipe: null,
+    prefix: '',
     advice: trials.length < 2 ? [] : [advice.sentence, ...advice.reasons],
     survey: [],
     pictures: reportPictures(context, chosen.result),

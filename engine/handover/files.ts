@@ -22,8 +22,8 @@ export interface HandoverQuestion extends ReportFacts {
   /** the matrix with what came beside it */
   readonly context: TrialContext;
   readonly trial: TrialResult;
-  /** why there is no recipe, where there is none */
-  readonly whyNoRecipe: string | null;
+  /** set before every file name, so that files saved one by one tell what they are of; empty in a folder of their own */
+  readonly prefix: string;
   /** bytes that taking out the factors may use, and the run that makes them */
   readonly factorLimit: number;
   readonly memoryLimit: number;
@@ -60,7 +60,7 @@ function file(
 
 /** All files of a handover, in the order in which they are shown. Bytes are made when asked for. */
 export function handoverFiles(q: HandoverQuestion): readonly HandoverFile[] {
-  return [
+  const files = [
     ...paperFiles(q),
     ...orderFiles(q),
     ...rowFiles(q),
@@ -68,6 +68,7 @@ export function handoverFiles(q: HandoverQuestion): readonly HandoverFile[] {
     ...structureFiles(q),
     ...factorFiles(q),
   ];
+  return files.map((f) => ({ ...f, name: q.prefix + f.name }));
 }
 
 function paperFiles(q: HandoverQuestion): HandoverFile[] {
@@ -113,22 +114,21 @@ function paperFiles(q: HandoverQuestion): HandoverFile[] {
       recipeChunks,
       {
         type: 'application/json',
-        refused: recipe === null ? (q.whyNoRecipe ?? 'No recipe was made.') : null,
       },
     ),
     scriptFile(q),
   ];
 }
 
-function scriptFile({ trial, context, name }: HandoverQuestion): HandoverFile {
+function scriptFile({ trial, context, name, prefix }: HandoverQuestion): HandoverFile {
   const { choice, counts, plan } = trial;
   const entries = choice.factorization === 'column-lu' ? counts.factorEntries : counts.lowerEntries;
   const chunks = () =>
     textChunk(
       pythonScript({
-        matrixFile: 'matrix.mtx',
-        orderFile: 'order-0-based.txt',
-        rowOrderFile: plan.plannedRow === null ? null : 'row-order-0-based.txt',
+        matrixFile: `${prefix}matrix.mtx`,
+        orderFile: `${prefix}order-0-based.txt`,
+        rowOrderFile: plan.plannedRow === null ? null : `${prefix}row-order-0-based.txt`,
         blockStart: plan.blockStart,
         factorization: choice.factorization,
         ordering: `${trial.ran.ordering} of ${name.replace(/[^\x20-\x7e]/g, '?')}`,
