@@ -1,9 +1,7 @@
+import { lazy, Suspense } from 'react';
 import { useStore } from 'zustand';
-import { ForecastPanel } from '../forecast/ForecastPanel.tsx';
-import { HandoverPanel } from '../handover/HandoverPanel.tsx';
 import { ImportPanel } from '../intake/ImportPanel.tsx';
 import { Plates } from '../intake/Plates.tsx';
-import { ProofPanel } from '../proof/ProofPanel.tsx';
 import { currentSheet, type Sheet, sheetsStore } from '../state/sheets.ts';
 import { openPanel, type PanelName, viewStore } from '../state/view.ts';
 import { SurveyPanel } from '../survey/SurveyPanel.tsx';
@@ -12,6 +10,11 @@ import { Boundary } from './Boundary.tsx';
 import { Splitter } from './Splitter.tsx';
 import { Tabs } from './Tabs.tsx';
 import { useWide } from './useWide.ts';
+
+// not needed for the first sight: each comes when it is first opened
+const ForecastPanel = lazy(async () => ({ default: (await import('../forecast/ForecastPanel.tsx')).ForecastPanel }));
+const HandoverPanel = lazy(async () => ({ default: (await import('../handover/HandoverPanel.tsx')).HandoverPanel }));
+const ProofPanel = lazy(async () => ({ default: (await import('../proof/ProofPanel.tsx')).ProofPanel }));
 
 const panels: readonly { name: PanelName; label: string }[] = [
   { name: 'survey', label: 'Survey' },
@@ -60,7 +63,9 @@ function Work({ sheet }: { sheet: Sheet }) {
         className={name === 'trials' ? 'tabs-bare' : ''}
       >
         <Boundary key={`${sheet.id} ${name}`} part="This panel">
-          <Panel name={name} sheet={sheet} />
+          <Suspense fallback={<p className="soft">being opened…</p>}>
+            <Panel name={name} sheet={sheet} />
+          </Suspense>
         </Boundary>
       </Tabs>
     </div>

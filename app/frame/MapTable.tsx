@@ -1,14 +1,17 @@
+import { lazy, Suspense } from 'react';
 import { useStore } from 'zustand';
-import { Growth } from '../forecast/Growth.tsx';
 import type { Pane } from '../maps/contract.ts';
 import { Maps } from '../maps/Maps.tsx';
 import type { Sheet } from '../state/sheets.ts';
 import { type SheetView, setSheetView, viewStore } from '../state/view.ts';
-import { TreeView } from '../tree/TreeView.tsx';
-import { Comparison } from '../trials/Comparison.tsx';
 import { sayChoice } from '../trials/explain.ts';
 import { Tabs } from './Tabs.tsx';
 import { useStable } from './useStable.ts';
+
+// not needed for the first sight: each comes when it is first opened
+const Comparison = lazy(async () => ({ default: (await import('../trials/Comparison.tsx')).Comparison }));
+const Growth = lazy(async () => ({ default: (await import('../forecast/Growth.tsx')).Growth }));
+const TreeView = lazy(async () => ({ default: (await import('../tree/TreeView.tsx')).TreeView }));
 
 const views: readonly { name: SheetView; label: string }[] = [
   { name: 'maps', label: 'Maps' },
@@ -47,21 +50,23 @@ export function MapTable({ sheet }: { sheet: Sheet }) {
       onChoose={setSheetView}
       className="sheet-tabs"
     >
-      {view === 'comparison' ? (
-        <Comparison sheet={sheet} />
-      ) : view === 'growth' ? (
-        <Growth />
-      ) : view === 'tree' ? (
-        <TreeView sheet={sheet} />
-      ) : (
-        <Maps
-          name={sheet.name}
-          panes={panes}
-          rows={sheet.summary.rows}
-          columns={sheet.summary.columns}
-          pointing={pointing}
-        />
-      )}
+      <Suspense fallback={<p className="soft">being opened…</p>}>
+        {view === 'comparison' ? (
+          <Comparison sheet={sheet} />
+        ) : view === 'growth' ? (
+          <Growth />
+        ) : view === 'tree' ? (
+          <TreeView sheet={sheet} />
+        ) : (
+          <Maps
+            name={sheet.name}
+            panes={panes}
+            rows={sheet.summary.rows}
+            columns={sheet.summary.columns}
+            pointing={pointing}
+          />
+        )}
+      </Suspense>
     </Tabs>
   );
 }

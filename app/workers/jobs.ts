@@ -15,7 +15,6 @@ import {
 } from './handoverJobs.ts';
 import { layMap, map, spot, whyFill } from './mapJobs.ts';
 import { combine, difference, matrixFile } from './matrixJobs.ts';
-import { prove, reuse, schur, sweep } from './proofJobs.ts';
 import type { Answer, Ask, Early, Operation } from './protocol.ts';
 import { read } from './readJobs.ts';
 import { reconcile } from './reconcileJobs.ts';
@@ -35,6 +34,13 @@ export interface Means<E> {
 }
 
 export type Job<K extends Operation> = (ask: Ask<K>, means: Means<Early<K>>) => Answer<K> | Promise<Answer<K>>;
+
+/** A job whose code comes when it is first asked for: the first load stays small. */
+function later<K extends Operation>(load: () => Promise<Job<K>>): Job<K> {
+  return async (ask, means) => (await load())(ask, means);
+}
+
+const proofs = () => import('./proofJobs.ts');
 
 /** Who does what. One line an operation. */
 export const jobs: { readonly [K in Operation]: Job<K> } = {
@@ -56,10 +62,10 @@ export const jobs: { readonly [K in Operation]: Job<K> } = {
   trial,
   forecast,
   reconcile,
-  prove,
-  sweep,
-  reuse,
-  schur,
+  prove: later(async () => (await proofs()).prove),
+  sweep: later(async () => (await proofs()).sweep),
+  reuse: later(async () => (await proofs()).reuse),
+  schur: later(async () => (await proofs()).schur),
   permutation,
   convention,
   handoverList,

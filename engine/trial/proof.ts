@@ -194,6 +194,7 @@ function analyseFronts(
   const tree = assemblyTree(symbolic, {
     amalgamation: options.amalgamation ?? usualAmalgamation,
     blocks: kind === 'lu' ? 'square' : 'packed',
+    held,
   });
   const entries = matrix.rowIndex.length;
   const peak = predictPeakBytes(tree, {

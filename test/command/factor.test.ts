@@ -259,3 +259,47 @@ describe('factor: more ways of one factorization', () => {
     expect(existsSync(path)).toBe(true);
   });
 });
+
+describe('factor: a Schur complement onto many unknowns', () => {
+  it('is that of dense elimination, held unknowns in the order given', async () => {
+    // the five-point grid of 6 × 6 with a random diagonal; held: its last column of points, listed backwards
+    const k = 6;
+    const n = k * k;
+    const entries: [number, number, number][] = [];
+    for (let i = 0; i < n; i++) {
+      entries.push([i + 1, i + 1, 4 + ((i * 7) % 5) / 10]);
+      if ((i + 1) % k !== 0) entries.push([i + 1, i + 2, -1], [i + 2, i + 1, -1]);
+      if (i + k < n) entries.push([i + 1, i + k + 1, -1], [i + k + 1, i + 1, -1]);
+    }
+    const a = Array.from({ length: n }, () => new Array<number>(n).fill(0));
+    for (const [i, j, v] of entries) a[i - 1][j - 1] = v;
+    const held = [36, 30, 24, 18, 12, 6].map((u) => u - 1);
+    const rest = Array.from({ length: n }, (_, i) => i).filter((i) => !held.includes(i));
+    for (const p of rest) {
+      for (let i = 0; i < n; i++) {
+        if (i === p || (rest.includes(i) && rest.indexOf(i) < rest.indexOf(p))) continue;
+        const m = a[i][p] / a[p][p];
+        for (let j = 0; j < n; j++) a[i][j] -= m * a[p][j];
+      }
+    }
+    const path = tempFile('grid-schur.mtx');
+    const file = triplets('grid-part.mtx', n, entries);
+    const words = ['--held-last', '36,30,24,18,12,6', '--schur-out', path, '--ordering', 'minimum-degree'];
+    for (const factorization of ['cholesky', 'ldlt', 'lu']) {
+      const run = await json(file, '--factorization', factorization, ...words);
+      expect(run.status).toBe(0);
+      const rows: number[] = run.value.schur.originalRows.map((r: number) => r - 1);
+      expect([...rows].sort((x, y) => x - y)).toEqual([...held].sort((x, y) => x - y));
+      const values = readFileSync(path, 'utf8')
+        .split('\n')
+        .filter((l) => l !== '' && !l.startsWith('%'))
+        .slice(1)
+        .map(Number);
+      rows.forEach((r, x) => {
+        rows.forEach((c, y) => {
+          expect(values[y * rows.length + x]).toBeCloseTo(a[r][c], 11);
+        });
+      });
+    }
+  });
+});
