@@ -27,6 +27,27 @@ for (const colorScheme of ['light', 'dark'] as const) {
       await page.getByRole('button', { name: 'Add a trial…' }).click();
       await expectAccessible(page);
     });
+
+    test('every panel and every view passes the accessibility scan', async ({ page }) => {
+      await open(page);
+      await openExample(page, 'Seepage under a weir');
+      await expect(line(page, 'nested dissection').getByRole('gridcell').nth(3)).toBeVisible({ timeout: 60_000 });
+      await page.getByRole('button', { name: /^C, minimum degree/ }).click();
+      for (const name of ['Forecast', 'Proof', 'Handover', 'Import', 'Survey']) {
+        await page.getByRole('tab', { name }).click();
+        await expect(page.getByText('being opened…')).toHaveCount(0);
+        if (name === 'Proof') {
+          await page.getByRole('button', { name: 'Run the proof' }).click();
+          await expect(page.getByRole('region', { name: 'Proof', exact: true })).toContainText('Trust');
+        }
+        await expectAccessible(page);
+      }
+      for (const name of ['Tree', 'Comparison', 'Growth', 'Maps']) {
+        await page.getByRole('tab', { name }).click();
+        await expect(page.getByText('being opened…')).toHaveCount(0);
+        await expectAccessible(page);
+      }
+    });
   });
 }
 
