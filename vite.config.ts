@@ -42,7 +42,7 @@ function offline(): Plugin {
     writeBundle({ dir }) {
       if (dir === undefined) return;
       const files = readdirSync(dir, { recursive: true, withFileTypes: true })
-        .filter((entry) => entry.isFile() && entry.name !== name)
+        .filter((entry) => entry.isFile() && entry.name !== name && !entry.parentPath.endsWith('screens'))
         .map((entry) => join(entry.parentPath, entry.name).slice(dir.length + 1))
         .sort();
       const hash = createHash('sha256');

@@ -12,6 +12,22 @@ export const stages = {
       .waitFor();
     await page.waitForTimeout(1500);
   },
+  async maps(page) {
+    await stages.trials(page);
+    await page.getByRole('checkbox', { name: 'D on the sheet' }).check({ force: true });
+    await page.getByRole('checkbox', { name: 'B on the sheet' }).uncheck({ force: true });
+    const map = page.getByRole('application', { name: /^Map of nested dissection.*fill-in/ });
+    await map.waitFor();
+    const box = await map.boundingBox();
+    await page.mouse.move(box.x + 0.8 * box.width, box.y + 0.86 * box.height);
+    await page.waitForTimeout(600);
+  },
+  async tree(page) {
+    await stages.trials(page);
+    await page.getByRole('tab', { name: 'Tree' }).click();
+    await page.getByRole('application', { name: /^Assembly tree/ }).waitFor();
+    await page.waitForTimeout(300);
+  },
   async comparison(page) {
     await stages.trials(page);
     await page.getByRole('tab', { name: 'Comparison' }).click();
