@@ -14,8 +14,7 @@ export const stages = {
   },
   async maps(page) {
     await stages.trials(page);
-    await page.getByRole('checkbox', { name: 'D on the sheet' }).check({ force: true });
-    await page.getByRole('checkbox', { name: 'B on the sheet' }).uncheck({ force: true });
+    await page.getByRole('button', { name: /^D, / }).click();
     const map = page.getByRole('application', { name: /^Map of nested dissection.*fill-in/ });
     await map.waitFor();
     const box = await map.boundingBox();
