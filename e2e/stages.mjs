@@ -30,7 +30,7 @@ export const stages = {
   async comparison(page) {
     await stages.trials(page);
     await page.getByRole('tab', { name: 'Comparison' }).click();
-    await page.waitForTimeout(200);
+    await page.locator('.chart').first().waitFor();
   },
   async forecast(page) {
     await stages.trials(page);
@@ -51,7 +51,8 @@ export const stages = {
     await stages.trials(page);
     await page.getByRole('button', { name: /^C, / }).click();
     await page.getByRole('tab', { name: 'Handover' }).click();
-    await page.getByText('(P A P^T)(k,l)').waitFor();
+    await page.getByRole('button', { name: 'Save all as one zip' }).waitFor();
+    await page.waitForTimeout(300);
   },
   async add(page) {
     await stages.trials(page);

@@ -1,4 +1,4 @@
-import { lazy, Suspense } from 'react';
+import { Suspense, useEffect } from 'react';
 import { useStore } from 'zustand';
 import { ImportPanel } from '../intake/ImportPanel.tsx';
 import { Plates } from '../intake/Plates.tsx';
@@ -7,14 +7,10 @@ import { openPanel, type PanelName, viewStore } from '../state/view.ts';
 import { SurveyPanel } from '../survey/SurveyPanel.tsx';
 import { Ledger } from '../trials/Ledger.tsx';
 import { Boundary } from './Boundary.tsx';
+import { ForecastPanel, fetchAhead, HandoverPanel, ProofPanel } from './later.ts';
 import { Splitter } from './Splitter.tsx';
 import { Tabs } from './Tabs.tsx';
 import { useWide } from './useWide.ts';
-
-// not needed for the first sight: each comes when it is first opened
-const ForecastPanel = lazy(async () => ({ default: (await import('../forecast/ForecastPanel.tsx')).ForecastPanel }));
-const HandoverPanel = lazy(async () => ({ default: (await import('../handover/HandoverPanel.tsx')).HandoverPanel }));
-const ProofPanel = lazy(async () => ({ default: (await import('../proof/ProofPanel.tsx')).ProofPanel }));
 
 const panels: readonly { name: PanelName; label: string }[] = [
   { name: 'survey', label: 'Survey' },
@@ -45,6 +41,7 @@ function Panel({ name, sheet }: { name: PanelName; sheet: Sheet }) {
 /** The ledger with the panels beside it; where the page is narrow, one of them at a time. */
 function Work({ sheet }: { sheet: Sheet }) {
   const wide = useWide();
+  useEffect(fetchAhead, []);
   const asked = useStore(viewStore, (v) => v.panel);
   const name = wide && asked === 'trials' ? 'survey' : asked;
   return (

@@ -1,17 +1,13 @@
-import { lazy, Suspense } from 'react';
+import { Suspense } from 'react';
 import { useStore } from 'zustand';
 import type { Pane } from '../maps/contract.ts';
 import { Maps } from '../maps/Maps.tsx';
 import type { Sheet } from '../state/sheets.ts';
 import { type SheetView, setSheetView, viewStore } from '../state/view.ts';
 import { sayChoice } from '../trials/explain.ts';
+import { Comparison, Growth, TreeView } from './later.ts';
 import { Tabs } from './Tabs.tsx';
 import { useStable } from './useStable.ts';
-
-// not needed for the first sight: each comes when it is first opened
-const Comparison = lazy(async () => ({ default: (await import('../trials/Comparison.tsx')).Comparison }));
-const Growth = lazy(async () => ({ default: (await import('../forecast/Growth.tsx')).Growth }));
-const TreeView = lazy(async () => ({ default: (await import('../tree/TreeView.tsx')).TreeView }));
 
 const views: readonly { name: SheetView; label: string }[] = [
   { name: 'maps', label: 'Maps' },
