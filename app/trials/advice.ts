@@ -41,10 +41,9 @@ export function adviceOn(
   const reasons = [...advice.reasons];
   if (done.length > 1) {
     const { remark, breakEvens } = compareWorkload(costsOf(done, target.cores), workload);
-    if (remark !== null) sentences.push(remark);
+    if (remark !== null) reasons.push(remark);
     const ahead = breakEvens.filter((e) => e.by === 'factorizations' && e.from > workload.factorizations);
-    if (ahead.length > 0) sentences.push(ahead[0].sentence);
-    reasons.push(...ahead.slice(1, 4).map((e) => e.sentence));
+    reasons.push(...ahead.slice(0, 6).map((e) => e.sentence));
   }
   return { sentences, reasons, cautions: advice.cautions };
 }
