@@ -3,7 +3,7 @@ import type { MapOutlines } from '../workers/mapOperations.ts';
 import type { Pane } from './contract.ts';
 import { type CellFacts, cellFacts, drawFrame, type Frame } from './draw.ts';
 import { type Ground, groundOf, placeOf } from './ground.ts';
-import { type MapCursor, mapsStore, setCursor, setViewport } from './mapsStore.ts';
+import { type MapCursor, type MapsState, mapsStore, setCursor, setViewport } from './mapsStore.ts';
 import { type MarkedPlaces, noMarks } from './marks.ts';
 import { followPalette, palette } from './palette.ts';
 import { PaneImages } from './paneImages.ts';
@@ -49,12 +49,7 @@ export class PaneControl {
       this.schedule();
       this.told();
     });
-    this.leave.push(
-      mapsStore.subscribe((now, before) => {
-        const looks = now.linked === 'entry' || now.linked !== before.linked;
-        this.follow(now.viewport !== before.viewport || (looks && now.cursor !== before.cursor));
-      }),
-    );
+    this.leave.push(mapsStore.subscribe((now, before) => this.follow(now, before)));
     this.leave.push(followPalette(() => this.refresh()));
     const observer = new ResizeObserver(() => this.resize());
     observer.observe(canvas);
@@ -222,10 +217,12 @@ export class PaneControl {
     setViewport(centreOn(viewport, (place.row + 0.5) / rows, (place.column + 0.5) / columns, this.least));
   }
 
-  private follow(moved: boolean): void {
+  private follow(now: MapsState, before: MapsState): void {
     this.schedule();
-    if (moved) this.rest();
-    else this.wish();
+    const heldElsewhere = now.linked === 'entry' && (now.cursor !== before.cursor || now.pinned !== before.pinned);
+    // a sharper image is asked for when the hand rests, never while it moves: counting and receiving one costs frames
+    if (now.viewport !== before.viewport || now.linked !== before.linked || heldElsewhere) this.rest();
+    else if (now.shade !== before.shade) this.wish();
   }
 
   private rest(): void {
