@@ -13,8 +13,15 @@ const keyStep = { fine: 1, coarse: 10 };
 export function listen(hand: HTMLElement, control: PaneControl, ask: () => void): () => void {
   const pointers = new Map<number, { x: number; y: number }>();
   let moved = 0;
+  let box: DOMRect | null = null;
+  let measured = 0;
   const share = (event: PointerEvent | WheelEvent | MouseEvent): { x: number; y: number } => {
-    const box = hand.getBoundingClientRect();
+    // measuring a page whose words have just changed lays it out anew: not more often than it can matter
+    const now = performance.now();
+    if (box === null || now - measured > 500 || event.type === 'pointerdown') {
+      box = hand.getBoundingClientRect();
+      measured = now;
+    }
     return { x: (event.clientX - box.left) / box.width, y: (event.clientY - box.top) / box.height };
   };
 
