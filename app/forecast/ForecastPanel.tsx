@@ -6,6 +6,7 @@ import type { Trial } from '../state/trial.ts';
 import { sayChoice } from '../trials/explain.ts';
 import { Parallel } from './Parallel.tsx';
 import { Reconcile } from './Reconcile.tsx';
+import { Spread } from './Spread.tsx';
 
 /** One figure with its kind, or why there is none. */
 function Line({ head, figure, write }: { head: string; figure: Figure; write: (x: number) => Written }) {
@@ -175,6 +176,7 @@ export function ForecastPanel({ sheet }: { sheet: Sheet }) {
       ) : (
         <Shown forecast={trial.forecast} />
       )}
+      <Spread sheet={sheet} />
       <Reconcile sheet={sheet} />
       <p className="caution-note small">
         <strong>Caution.</strong> A forecast is no guarantee once pivots are chosen by size. Seconds are modelled from

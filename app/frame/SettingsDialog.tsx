@@ -5,6 +5,8 @@ import { eraseSettings, setSettings, settingsStore, type Theme } from '../state/
 import { canShare } from '../workers/shared.ts';
 import type { Target, Workload } from '../workers/target.ts';
 
+import { Calibrate } from './Calibrate.tsx';
+
 const gibibyte = 2 ** 30;
 
 function Quantity(props: {
@@ -119,6 +121,7 @@ export function SettingsDialog({ ref }: { ref: RefObject<HTMLDialogElement | nul
             </select>
           </label>
         </div>
+        <Calibrate />
       </fieldset>
       <fieldset>
         <legend>The work with this pattern</legend>

@@ -33,24 +33,28 @@ export function TopLine() {
           Fillcast
         </h1>
         <div className="topline-matrix">
+          {sheets.length > 1 || (sheet === null && sheets.length > 0) ? (
+            <label>
+              <span className="unseen">Matrix in front</span>
+              <select
+                value={sheet?.id ?? ''}
+                onChange={(event) => bringToFront(event.target.value === '' ? null : event.target.value)}
+              >
+                {sheet === null ? <option value="">an empty sheet</option> : null}
+                {sheets.map((s) => (
+                  <option key={s.id} value={s.id}>
+                    {s.name}
+                  </option>
+                ))}
+              </select>
+            </label>
+          ) : (
+            <strong>{sheet?.name}</strong>
+          )}
           {sheet === null ? (
             <p className="soft">A survey, a forecast and a proof for your sparse matrix</p>
           ) : (
             <>
-              {sheets.length > 1 ? (
-                <label>
-                  <span className="unseen">Matrix in front</span>
-                  <select value={sheet.id} onChange={(event) => bringToFront(event.target.value)}>
-                    {sheets.map((s) => (
-                      <option key={s.id} value={s.id}>
-                        {s.name}
-                      </option>
-                    ))}
-                  </select>
-                </label>
-              ) : (
-                <strong>{sheet.name}</strong>
-              )}
               {summary === null ? null : (
                 <span className="topline-facts">
                   <span className="figure">
@@ -65,6 +69,9 @@ export function TopLine() {
               <button type="button" className="plain small" onClick={() => closeSheet(sheet.id)}>
                 {sheet.phase === 'reading' ? 'stop' : 'put away'}
                 <span className="unseen"> {sheet.name}</span>
+              </button>
+              <button type="button" className="plain small" onClick={() => bringToFront(null)}>
+                open another
               </button>
             </>
           )}

@@ -28,6 +28,8 @@ export const terms = {
     'Ordering and analysis once, then the factorizations and solves of your workload, at the rates of your target.',
   'ordering time':
     'Wall-clock seconds of this ordering in this browser. Seconds in a browser are not seconds of your solver; ratios travel.',
+  'critical path':
+    'Operations on the longest way from a leaf of the assembly tree to its root, each front whole: what cannot be done side by side. Exact until a pivot is delayed.',
   'at most faster':
     'Operations divided by those on the critical path of the assembly tree: no number of cores can gain more.',
   'backward error': '‖b − A·x‖∞ / (‖A‖∞‖x‖∞ + ‖b‖∞) of the solution that was returned.',

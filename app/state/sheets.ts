@@ -96,7 +96,7 @@ export function freshSheet(id: SheetId, name: string, phase: string, bytesAll: n
 }
 
 /** Brings a sheet to the front. */
-export function bringToFront(id: SheetId): void {
+export function bringToFront(id: SheetId | null): void {
   sheetsStore.setState({ current: id });
 }
 

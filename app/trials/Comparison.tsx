@@ -14,6 +14,7 @@ const compared: readonly FigureName[] = [
   'factorEntries',
   'operations',
   'peakBytes',
+  'criticalPath',
   'largestFront',
   'factorSeconds',
   'totalSeconds',

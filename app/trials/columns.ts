@@ -43,6 +43,7 @@ export const columns: readonly Column[] = [
   column('factorSeconds', 'factorization', 'forecast time', write.seconds, true),
   column('totalSeconds', 'whole workload', 'total time', write.seconds, true),
   column('mostSpeedup', 'at most faster', 'at most faster', write.times, false, 'most'),
+  column('criticalPath', 'critical path', 'critical path', write.count),
   column('provenSeconds', 'proven time', 'proof', write.seconds),
   column('backwardError', 'backward error', 'backward error', write.plainNumber),
 ];

@@ -41,6 +41,7 @@ function later<K extends Operation>(load: () => Promise<Job<K>>): Job<K> {
 }
 
 const proofs = () => import('./proofJobs.ts');
+const measures = () => import('./measureJobs.ts');
 
 /** Who does what. One line an operation. */
 export const jobs: { readonly [K in Operation]: Job<K> } = {
@@ -62,6 +63,8 @@ export const jobs: { readonly [K in Operation]: Job<K> } = {
   trial,
   forecast,
   reconcile,
+  calibrate: later(async () => (await measures()).calibrate),
+  spread: later(async () => (await measures()).spread),
   prove: later(async () => (await proofs()).prove),
   sweep: later(async () => (await proofs()).sweep),
   reuse: later(async () => (await proofs()).reuse),

@@ -6,9 +6,11 @@ import type { Target } from '../../engine/forecast/target.ts';
 import type { MatrixDifference } from '../../engine/matrix/difference.ts';
 import type { NewToOld } from '../../engine/matrix/permutation.ts';
 import type { Survey } from '../../engine/survey/survey.ts';
+import type { Calibration } from '../../engine/trial/calibration.ts';
 import type { Choice } from '../../engine/trial/choice.ts';
 import type { TrialResult } from '../../engine/trial/result.ts';
 import type { MatrixFacts } from '../../engine/trial/rules.ts';
+import type { TrialSpread } from '../../engine/trial/spread.ts';
 import type { HandoverOperations } from './handoverOperations.ts';
 import type { MapOperations } from './mapOperations.ts';
 import type { ProofOperations } from './proofOperations.ts';
@@ -135,6 +137,18 @@ export interface Operations extends MapOperations, TreeOperations, ProofOperatio
   convention: {
     ask: { order: NewToOld; direction: Direction; base: 0 | 1 };
     answer: { formula: string; example: readonly string[]; selfInverse: boolean };
+    early: never;
+  };
+  /** rates of this machine, from model problems factorized here */
+  calibrate: { ask: { target: Target }; answer: Calibration; early: never };
+  /** how far the figures of trials hang on seeds and numbering; "no difference" from the best where runs overlap */
+  spread: {
+    ask: {
+      key: MatrixKey;
+      trials: readonly { result: TrialResult; heldLast: Int32Array }[];
+      runs: number;
+    };
+    answer: readonly (TrialSpread & { readonly noDifference: boolean })[];
     early: never;
   };
   /** which convention of counting, on which trial, explains figures that another solver reported */

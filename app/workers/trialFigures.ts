@@ -35,6 +35,7 @@ export type FigureName =
   | 'envelope'
   | 'peakBytes'
   | 'mostSpeedup'
+  | 'criticalPath'
   | 'factorSeconds'
   | 'totalSeconds'
   | 'provenSeconds'
@@ -103,9 +104,15 @@ function forecastFigures(
   analysis: number,
   workload: Workload,
   factorEntries: number | null,
-): Pick<TrialFigures, 'peakBytes' | 'mostSpeedup' | 'factorSeconds' | 'totalSeconds'> {
+): Pick<TrialFigures, 'peakBytes' | 'mostSpeedup' | 'criticalPath' | 'factorSeconds' | 'totalSeconds'> {
   if (forecast === null)
-    return { peakBytes: waiting, mostSpeedup: waiting, factorSeconds: waiting, totalSeconds: waiting };
+    return {
+      peakBytes: waiting,
+      mostSpeedup: waiting,
+      criticalPath: waiting,
+      factorSeconds: waiting,
+      totalSeconds: waiting,
+    };
   const cost = costOf(forecast, cores, analysis, factorEntries ?? 0, '');
   const { parallel, storage } = forecast;
   const modelled = (value: number): TrialFigure => ({ value, kind: 'modelled', reason: null });
@@ -115,6 +122,10 @@ function forecastFigures(
       parallel === null
         ? { value: null, kind: 'modelled', reason: 'Column LU has no fronts; its parallelism is not modelled.' }
         : { value: parallel.divisibleFrontsSpeedup, kind: 'bound', reason: null },
+    criticalPath:
+      parallel === null
+        ? { value: null, kind: 'exact', reason: 'Column LU has no fronts; its critical path is not counted.' }
+        : { value: parallel.sequentialFrontsPath, kind: 'exact', reason: null },
     factorSeconds: modelled(cost.factorization),
     totalSeconds: modelled(workloadSeconds(cost, workload)),
   };
