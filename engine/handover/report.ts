@@ -45,7 +45,8 @@ interface ReportColumn {
   readonly write: (x: number) => string;
 }
 
-const short = (x: number): string => (Number.isInteger(x) && x < 1e6 ? whole(x) : x.toPrecision(3));
+const short = (x: number): string =>
+  Number.isInteger(x) && x < 1e6 ? whole(x) : x.toExponential(2).replace('e+', 'e');
 
 const columns: readonly ReportColumn[] = [
   { figure: 'factorEntries', head: 'factor entries', write: short },
@@ -53,7 +54,6 @@ const columns: readonly ReportColumn[] = [
   { figure: 'factorBytes', head: 'factors', write: inUnit },
   { figure: 'peakBytes', head: 'peak memory', write: inUnit },
   { figure: 'largestFront', head: 'largest front', write: short },
-  { figure: 'treeHeight', head: 'tree height', write: short },
   { figure: 'factorSeconds', head: 'factorization', write: secondsWords },
   { figure: 'totalSeconds', head: 'whole workload', write: secondsWords },
 ];
@@ -68,7 +68,7 @@ export function reportHtml(facts: ReportFacts): string {
     head(title),
     `<header><h1>${esc(facts.name)}</h1><p class="lead">${esc(leadOf(facts))}</p></header>`,
     cautionList(sheet.cautions),
-    facts.advice.length === 0 ? '' : section('Advice', facts.advice.map((line) => `<p>${esc(line)}</p>`).join('')),
+    facts.advice.length === 0 ? '' : section('Advice', adviceOf(facts.advice)),
     facts.survey.length === 0 ? '' : section('Survey', definitionTable(facts.survey)),
     facts.pictures.length === 0 ? '' : section('Pictures', pictureFigures(facts)),
     section('Trials', tableOf(facts) + barsOf(facts)),
@@ -113,6 +113,13 @@ function cautionList(cautions: readonly string[]): string {
   return `<section class="cautions" aria-label="Cautions"><h2>Cautions</h2><ul>${cautions.map((c) => `<li>${esc(c)}</li>`).join('')}</ul></section>`;
 }
 
+/** The first sentence by itself, the others as its reasons, each once. */
+function adviceOf(advice: readonly string[]): string {
+  const [first, ...others] = new Set(advice);
+  const reasons = others.map((line) => `<li>${esc(line)}</li>`).join('');
+  return `<p>${esc(first)}</p>${reasons === '' ? '' : `<ul>${reasons}</ul>`}`;
+}
+
 function definitionTable(lines: readonly (readonly [string, string])[]): string {
   const rows = lines.map(([what, value]) => `<tr><th scope="row">${esc(what)}</th><td>${esc(value)}</td></tr>`);
   return `<table class="facts"><tbody>${rows.join('')}</tbody></table>`;
@@ -140,20 +147,25 @@ function tableOf(facts: ReportFacts): string {
   const best = new Map(
     shown.map(({ figure }) => [figure, Math.min(...facts.table.rows.flatMap((r) => r.figures[figure]?.value ?? []))]),
   );
-  const headRow = ['trial', 'ordering', 'factorization', 'pivoting', ...shown.map((c) => c.head)];
+  const headRow = ['trial', 'what it is', ...shown.map((c) => c.head)];
   const rows = facts.table.rows.map(({ name, choice, figures }) => {
     const cells = shown.map(({ figure, write }) => {
       const f = figures[figure];
       if (f === undefined || f.value === null) return '<td class="number">–</td>';
       const mark =
         f.value === best.get(figure) && facts.table.rows.length > 1 ? '<span class="best" title="best">▸</span> ' : '';
-      return `<td class="number" title="${esc(String(f.value))}">${mark}${esc(write(f.value))} <small>${esc(f.kind)}</small></td>`;
+      return `<td class="number" title="${esc(String(f.value))}">${mark}${esc(write(f.value))}<br><small>${esc(f.kind)}</small></td>`;
     });
-    const pivoting = choice.pivoting === 'threshold' ? `threshold ${choice.threshold}` : choice.pivoting;
+    const pivoting =
+      choice.pivoting === 'threshold'
+        ? `, threshold ${choice.threshold}`
+        : choice.pivoting === 'static'
+          ? ', static pivots'
+          : '';
     const chosen = name === facts.trialName ? ' class="chosen"' : '';
-    return `<tr${chosen}><th scope="row">${esc(name)}</th><td>${choice.ordering}</td><td>${choice.factorization}</td><td>${pivoting}</td>${cells.join('')}</tr>`;
+    return `<tr${chosen}><th scope="row">${esc(name)}</th><td>${choice.ordering}<br><small>${choice.factorization}${pivoting}</small></td>${cells.join('')}</tr>`;
   });
-  return `<div class="wide"><table class="trials"><thead><tr>${headRow.map((h) => `<th scope="col">${esc(h)}</th>`).join('')}</tr></thead><tbody>${rows.join('')}</tbody></table></div><p class="small">▸ best of its column. exact: from the pattern alone; bound: proven limit; modelled: from the rates of the target; measured: by a run.</p>`;
+  return `<div class="wide" tabindex="0" role="region" aria-label="Trials"><table class="trials"><thead><tr>${headRow.map((h) => `<th scope="col">${esc(h)}</th>`).join('')}</tr></thead><tbody>${rows.join('')}</tbody></table></div><p class="small">▸ best of its column. exact: from the pattern alone; bound: proven limit; modelled: from the rates of the target; measured: by a run.</p>`;
 }
 
 /** Bars of entries, operations and peak, drawn as SVG with the memory limit as a dashed line. */

@@ -21,6 +21,7 @@ th,td{text-align:left;vertical-align:top;padding:.25rem .6rem .25rem 0;border-bo
 .chosen th,.chosen td{font-weight:bold}
 .wide{overflow-x:auto}
 .pictures,.charts{display:grid;grid-template-columns:repeat(auto-fit,minmax(min(100%,18rem),1fr));gap:1.5rem;margin:1rem 0}
+.charts{grid-template-columns:repeat(auto-fit,minmax(min(100%,27rem),1fr))}
 figure{margin:0;break-inside:avoid}
 figure img,figure svg{width:100%;height:auto;display:block}
 .pictures img,.pictures svg{border:1px solid var(--ink)}
