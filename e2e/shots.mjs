@@ -51,8 +51,8 @@ try {
         if (wanted.length > 0 && !wanted.includes(stage)) continue;
         await page.goto(`http://localhost:${port}/`);
         await go(page, root);
-        const file = readme ? `${stage}.png` : `${stage}-${name}-${colorScheme}.png`;
-        await page.screenshot({ path: join(folder, file) });
+        const file = readme ? `${stage}.jpg` : `${stage}-${name}-${colorScheme}.png`;
+        await page.screenshot({ path: join(folder, file), ...(readme ? { type: 'jpeg', quality: 80 } : {}) });
       }
       await context.close();
     }
