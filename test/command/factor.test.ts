@@ -1,6 +1,6 @@
 import { existsSync, readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
-import { figures, readableNames, referencePath } from '../support/reference.ts';
+import { figures, pathOf, readableNames, referencePath } from '../support/reference.ts';
 import { runCommand, tempFile } from './runCommand.ts';
 
 const json = async (...words: string[]) => {
@@ -31,7 +31,7 @@ describe('factor: against dense LAPACK through NumPy (test/reference/figures.jso
   it('there are matrices to try', () => expect(names.length).toBeGreaterThan(3));
   it.each(names)('%s: determinant, condition, inertia, verdict', async (name) => {
     const f = figures[name];
-    const { status, value } = await json(referencePath(f.file ?? `${name}.mtx`));
+    const { status, value } = await json(pathOf(name) as string);
     expect(status).toBe(0);
     expect(value.verdict).not.toBe('red');
     expect(Math.abs(value.logAbsDeterminant - (f.logAbsDeterminant as number))).toBeLessThan(

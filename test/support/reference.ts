@@ -81,7 +81,8 @@ export function readableNames(): string[] {
   return Object.keys(figures).filter((name) => pathOf(name) !== null);
 }
 
-function pathOf(name: string): string | null {
+/** Where the matrix of that name lies, committed or further; null where it does not. */
+export function pathOf(name: string): string | null {
   const own = referencePath(`${name}.mtx`);
   if (existsSync(own)) return own;
   if (fetchedFolder === null) return null;
