@@ -74,7 +74,8 @@ export function eliminateByDegreeInPlace(
   let free = graph.free;
   let list = heads - NEXT;
   let remaining = totalWeight;
-  let flag = 1;
+  // above the marks of elements there are from the start, which are 1
+  let flag = 2;
   let largest = graph.largestElement;
   let pivots = 0;
   let work = 0;

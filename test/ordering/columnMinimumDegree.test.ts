@@ -1,8 +1,11 @@
 import { describe, expect, it } from 'vitest';
 import { checkPermutation } from '../../engine/matrix/check.ts';
 import type { Pattern } from '../../engine/matrix/pattern.ts';
+import { permutePattern } from '../../engine/matrix/permute.ts';
 import { noProgress } from '../../engine/matrix/progress.ts';
+import { relabellingOf } from '../../engine/ordering/bestOf.ts';
 import { columnMinimumDegree } from '../../engine/ordering/columnMinimumDegree.ts';
+import { modelProblems } from '../../engine/problems/model.ts';
 import { naiveElimination } from '../support/elimination.ts';
 import { randomPattern } from '../support/random.ts';
 import { readReference } from '../support/reference.ts';
@@ -40,6 +43,13 @@ describe('column minimum degree (Davis, Gilbert, Larimore & Ng 2004)', () => {
       );
     });
   }
+  it('ends with every column once on a nine-point grid under many numberings (rows were lost with the first pivot, and it ran for ever)', () => {
+    const a = modelProblems.grid2d9(30);
+    for (let seed = 1; seed <= 12; seed++) {
+      const p = relabellingOf(a.columns, seed);
+      checkPermutation(columnMinimumDegree(permutePattern(a, p, p), {}, noProgress).order, a.columns);
+    }
+  });
   it('has no fill where AᵀA is a path, whatever the numbering', () => {
     // rows {j, j + 1}: AᵀA is tridiagonal
     const n = 200;
