@@ -87,12 +87,15 @@ export function startColumnGraph(a: Pattern, byRow: Pattern, role: ColumnRole): 
     const r = RECORD * k;
     const from = at;
     at = listInto(w, at, a, columnAt[k], rowAddress);
+    let degree = 0;
+    for (let q = from; q < at; q++) degree += w[w[q] + DEGREE] - 1;
     w[r + START] = from;
     w[r + LENGTH] = at - from;
     w[r + ELEMENTS] = at - from;
     w[r + WEIGHT] = 1;
+    // the sum counts a column as often as it shares a row
+    w[r + DEGREE] = degree < variables - 1 ? degree : variables - 1;
   }
-  firstDegreesInPlace(w, variables, entryCount(a));
   return {
     w,
     layout,
@@ -103,41 +106,6 @@ export function startColumnGraph(a: Pattern, byRow: Pattern, role: ColumnRole): 
     haloWeight: variables - interior,
     largestElement,
   };
-}
-
-/** Reading all rows for the first degrees may cost so many steps an entry of A: rows of some 60 entries. */
-const MOST_STEPS = 64;
-
-/**
- * First degrees. The sum of the row lengths counts a column as often as it shares a row and misleads where rows overlap much, so the columns
- * that share a row are counted one by one where that is cheap (measured: fewer entries of L and U on most open matrices, up to a fifth).
- */
-function firstDegreesInPlace(w: Int32Array, variables: number, entries: number): void {
-  const limit = RECORD * variables;
-  let steps = 0;
-  for (let r = 0; r < limit; r += RECORD) {
-    let sum = 0;
-    for (let q = w[r + START], end = q + w[r + LENGTH]; q < end; q++) sum += w[w[q] + DEGREE] - 1;
-    steps += sum;
-    w[r + DEGREE] = sum < variables - 1 ? sum : variables - 1;
-    w[r + MARK] = 0;
-  }
-  if (steps > MOST_STEPS * entries) return;
-  for (let r = 0, stamp = 1; r < limit; r += RECORD, stamp++) {
-    let degree = 0;
-    w[r + MARK] = stamp;
-    for (let q = w[r + START], end = q + w[r + LENGTH]; q < end; q++) {
-      const e = w[q];
-      for (let s = w[e + START], last = s + w[e + LENGTH]; s < last; s++) {
-        const u = w[s];
-        if (w[u + MARK] === stamp) continue;
-        w[u + MARK] = stamp;
-        degree++;
-      }
-    }
-    w[r + DEGREE] = degree;
-  }
-  for (let r = 0; r < limit; r += RECORD) w[r + MARK] = 0;
 }
 
 /** Writes the addresses of the entries of column j that have one; returns the new end. */
