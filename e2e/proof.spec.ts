@@ -28,7 +28,8 @@ test('the threshold is swept: a line for each, failures told, chart with words',
   for (const u of ['1', '0.5', '0.1', '0.01', '0.001', 'static']) {
     await expect(sweep.getByRole('rowheader', { name: u, exact: true })).toBeVisible();
   }
-  await expect(sweep.getByRole('img')).toHaveAttribute('aria-label', /backward error/);
+  await expect(sweep.getByRole('img', { name: /^Thresholds/ })).toHaveAttribute('aria-label', /backward error/);
+  await expect(sweep.getByRole('img', { name: /^Pivot growth/ })).toBeVisible();
   const { violations } = await new AxeBuilder({ page }).analyze();
   expect(violations).toEqual([]);
 });

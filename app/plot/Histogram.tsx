@@ -1,5 +1,8 @@
 import { scaleBand, scaleSymlog } from 'd3';
+import { useRef } from 'react';
 import { exactly } from '../figures/format.ts';
+import { notify } from '../state/notices.ts';
+import { savePng, saveSvg } from './save.ts';
 
 const width = 340;
 const height = 84;
@@ -8,6 +11,8 @@ const foot = 18;
 /** A small bar chart; heights on a logarithmic scale, so that a lone line beside a million stays visible. The table under it says the same. */
 export function Histogram(props: { of: string; columns: readonly { label: string; height: number }[] }) {
   const { of, columns } = props;
+  const svg = useRef<SVGSVGElement>(null);
+  const file = of.toLowerCase().replace(/[^a-z]+/g, '-');
   const most = Math.max(1, ...columns.map((c) => c.height));
   const x = scaleBand(
     columns.map((c) => c.label),
@@ -18,7 +23,7 @@ export function Histogram(props: { of: string; columns: readonly { label: string
   return (
     <details className="histogram">
       <summary>
-        <svg viewBox={`0 0 ${width} ${height}`} aria-hidden="true" focusable="false">
+        <svg ref={svg} viewBox={`0 0 ${width} ${height}`} aria-hidden="true" focusable="false">
           <path d={`M0 ${height - foot + 0.5}H${width}`} stroke="currentColor" />
           {columns.map((c, k) => (
             <g key={c.label}>
@@ -51,6 +56,28 @@ export function Histogram(props: { of: string; columns: readonly { label: string
           ))}
         </tbody>
       </table>
+      <p className="small">
+        save as{' '}
+        <button
+          type="button"
+          className="plain"
+          aria-label={`Save ${of} as SVG`}
+          onClick={() => svg.current !== null && saveSvg(svg.current, file)}
+        >
+          SVG
+        </button>{' '}
+        <button
+          type="button"
+          className="plain"
+          aria-label={`Save ${of} as PNG`}
+          onClick={() => {
+            if (svg.current === null) return;
+            savePng(svg.current, file).catch(() => notify('The picture could not be turned into a PNG here.', true));
+          }}
+        >
+          PNG
+        </button>
+      </p>
     </details>
   );
 }

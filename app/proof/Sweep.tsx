@@ -64,10 +64,50 @@ function SweepChart({ rows }: { rows: readonly SweepRow[] }) {
   );
 }
 
+/** Pivot growth over the thresholds: how much larger than the matrix the factors became. */
+function GrowthChart({ rows }: { rows: readonly SweepRow[] }) {
+  const done = rows.flatMap((r) => (r.pivotGrowth === null ? [] : [{ name: nameOf(r), growth: r.pivotGrowth }]));
+  if (done.length < 2) return null;
+  const x = scalePoint(
+    done.map((d) => d.name),
+    [margin.left, width - margin.right],
+  ).padding(0.3);
+  const least = Math.min(...done.map((d) => d.growth));
+  const most = Math.max(...done.map((d) => d.growth));
+  const y = scaleLog([least / 1.5, most * 1.5], [height - margin.bottom, margin.top]);
+  const words = done.map((d) => `${d.name}: ${d.growth.toPrecision(3)}`).join('; ');
+  return (
+    <ChartPlate title="Pivot growth" words={words} width={width} height={height} file="pivot-growth">
+      <path
+        d={`M${margin.left} ${margin.top}V${height - margin.bottom}H${width - margin.right}`}
+        className="chart-axis"
+        fill="none"
+      />
+      {[...new Set([least, most])].map((t) => (
+        <text key={t} x={margin.left - 6} y={y(t)} dy="0.32em" textAnchor="end">
+          {asText(plainNumber(t))}
+        </text>
+      ))}
+      {done.map((d) => (
+        <g key={d.name}>
+          <rect x={(x(d.name) ?? 0) - 3.5} y={y(d.growth) - 3.5} width="7" height="7" className="bar-ink" />
+          <text x={x(d.name)} y={height - 18} textAnchor="middle">
+            {d.name}
+          </text>
+        </g>
+      ))}
+      <text x={width / 2} y={height - 3} textAnchor="middle" className="chart-note">
+        threshold; growth on a logarithmic scale
+      </text>
+    </ChartPlate>
+  );
+}
+
 function SweepTable({ rows }: { rows: readonly SweepRow[] }) {
   return (
     <>
       <SweepChart rows={rows} />
+      <GrowthChart rows={rows} />
       <WideTable label="Thresholds, one a line">
         <table className="facts-table sweep-table">
           <thead>
