@@ -44,6 +44,7 @@ function DropBelow({ sheet }: { sheet: Sheet }) {
       <label htmlFor={id}>Leave out values up to</label>
       <input
         id={id}
+        type="text"
         className="figure"
         size={8}
         value={bound}

@@ -50,6 +50,7 @@ export function Several({ sheet }: { sheet: Sheet }) {
         {[sheet, ...others].map(({ id, name }) => (
           <label key={id} className="with-unit">
             <input
+              type="text"
               className="figure"
               size={10}
               value={wordOf(id)}
